@@ -1,0 +1,21 @@
+import { expect, test } from "vitest";
+import { formatTimecode, momentParam, readMoment, readTimecode } from "./timecode";
+
+test("what is written can be read back", () => {
+  for (const ms of [0, 1000, 59_000, 60_000, 83_000, 3_599_000, 3_600_000, 7_384_000])
+    expect(readTimecode(formatTimecode(ms))).toBe(ms);
+});
+
+test("fractions and bare seconds are read; nonsense is not", () => {
+  expect(readTimecode("1:23.5")).toBe(83_500);
+  expect(readTimecode("83")).toBe(83_000);
+  expect(readTimecode("1:75")).toBeNull();
+  expect(readTimecode("soon")).toBeNull();
+  expect(readTimecode("")).toBeNull();
+});
+
+test("the moment in the address survives the way there and back", () => {
+  expect(readMoment(new URLSearchParams({ t: momentParam(404_110) }))).toBe(404_100);
+  expect(readMoment(new URLSearchParams("t=-3"))).toBe(0);
+  expect(readMoment(new URLSearchParams(""))).toBe(0);
+});

@@ -1,0 +1,32 @@
+import { index, layout, prefix, route, type RouteConfig } from "@react-router/dev/routes";
+
+export default [
+  // Before sign-in.
+  route("sign-up", "routes/auth/sign-up.tsx"),
+  route("sign-in", "routes/auth/sign-in.tsx"),
+  route("sign-out", "routes/auth/sign-out.ts"),
+  route("forgot-password", "routes/auth/forgot-password.tsx"),
+  route("reset-password/:token", "routes/auth/reset-password.tsx"),
+  route("invitation/:token", "routes/auth/invitation.tsx"),
+
+  // Signed-in pages: the shell carries the middleware that sets the Scope.
+  layout("routes/shell.tsx", [
+    // Everybody: find, watch.
+    index("routes/library/library.tsx"),
+
+    // Each person: what to learn, what is learned.
+
+    // Instructors and owners: from recording to lesson.
+
+    // Owners: people, shop.
+    route("account", "routes/team/account.tsx"),
+    route("team", "routes/team/team.tsx"),
+    route("settings", "routes/team/settings.tsx"),
+
+    // Answers for programs, not pages.
+    ...prefix("api", [route("units", "routes/api/units.ts")]),
+  ]),
+
+  route("healthz", "routes/api/health.ts"),
+  route("*", "routes/not-found.tsx"),
+] satisfies RouteConfig;
