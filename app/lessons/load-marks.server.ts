@@ -72,7 +72,8 @@ export function loadMarks(scope: InShop, lessonId: LessonId): Mark[] {
           .where(and(eq(markValues.shopId, scope.shopId), inArray(markValues.markId, ids)))
           .orderBy(asc(markValues.n))
           .all();
-  const values = Map.groupBy(valueRows, (row) => row.markId);
+  const values = new Map<string, typeof valueRows>();
+  for (const row of valueRows) values.set(row.markId, [...(values.get(row.markId) ?? []), row]);
   const names = namesOf(scope);
   const newest = newestChecks(scope, ids);
   return rows.map(({ mark, citation, document }) => {
