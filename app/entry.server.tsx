@@ -3,7 +3,12 @@ import { PassThrough } from "node:stream";
 import { createReadableStreamFromReadable } from "@react-router/node";
 import { isbot } from "isbot";
 import { renderToPipeableStream, type RenderToPipeableStreamOptions } from "react-dom/server";
-import { isRouteErrorResponse, ServerRouter, type EntryContext, type HandleErrorFunction } from "react-router";
+import {
+  isRouteErrorResponse,
+  ServerRouter,
+  type EntryContext,
+  type HandleErrorFunction,
+} from "react-router";
 import { env } from "./env.server";
 
 export const streamTimeout = 5_000;
@@ -28,7 +33,12 @@ function contentSecurityPolicy(nonce: string): string {
   ].join("; ");
 }
 
-export default function handleRequest(request: Request, status: number, headers: Headers, context: EntryContext) {
+export default function handleRequest(
+  request: Request,
+  status: number,
+  headers: Headers,
+  context: EntryContext,
+) {
   if (request.method === "HEAD") return new Response(null, { status, headers });
   // In development the bundler injects inline styles and scripts of its own.
   const nonce = import.meta.env.DEV ? undefined : randomBytes(16).toString("base64");

@@ -13,7 +13,10 @@ declare module "webvtt-parser" {
   };
   type ParseError = { message: string; line: number; col?: number };
   export class WebVTTParser {
-    parse(input: string, mode?: "subtitles" | "captions" | "chapters" | "metadata"): { cues: ParsedCue[]; errors: ParseError[]; time: number };
+    parse(
+      input: string,
+      mode?: "subtitles" | "captions" | "chapters" | "metadata",
+    ): { cues: ParsedCue[]; errors: ParseError[]; time: number };
   }
   const webvtt: { WebVTTParser: typeof WebVTTParser };
   export default webvtt;

@@ -49,7 +49,10 @@ export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
     <ErrorPage
       {...(isRouteErrorResponse(error) && error.status < 500
         ? { status: error.status, sentence: String(error.data) }
-        : { status: 500, sentence: "Something broke on our side. Your work up to the last save is kept. Try again." })}
+        : {
+            status: 500,
+            sentence: "Something broke on our side. Your work up to the last save is kept. Try again.",
+          })}
     />
   );
 }

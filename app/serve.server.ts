@@ -10,14 +10,24 @@ import { database } from "./db.server";
 import { env } from "./env.server";
 import { startQueue } from "./queue/run-tasks.server";
 
-const DEMO_ACCOUNTS = ["owner@harrowlane.example", "instructor@harrowlane.example", "trainee@harrowlane.example"];
+const DEMO_ACCOUNTS = [
+  "owner@harrowlane.example",
+  "instructor@harrowlane.example",
+  "trainee@harrowlane.example",
+];
 
 /** Production with well-known passwords in it would be an open door. */
 function refuseDemoAccounts(): void {
   if (env().ALLOW_DEMO_ACCOUNTS === "yes" || env().NODE_ENV !== "production") return;
-  const found = database().db.select({ id: users.id }).from(users).where(inArray(users.email, DEMO_ACCOUNTS)).get();
+  const found = database()
+    .db.select({ id: users.id })
+    .from(users)
+    .where(inArray(users.email, DEMO_ACCOUNTS))
+    .get();
   if (found)
-    throw new Error("This database holds the demo accounts, whose password everybody knows. Start with a database of your own.");
+    throw new Error(
+      "This database holds the demo accounts, whose password everybody knows. Start with a database of your own.",
+    );
 }
 
 function start(): void {
@@ -41,14 +51,24 @@ function start(): void {
 
   // Per address of the visitor; the tries for one account are counted in the sign-in itself.
   const doors = new RateLimiterMemory({ points: 300, duration: 15 * 60 });
-  app.post(["/sign-in", "/sign-up", "/forgot-password", "/reset-password/:token", "/invitation/:token"], (request, response, next) => {
-    doors.consume(request.ip ?? "unknown").then(
-      () => next(),
-      () => response.status(429).type("text/plain").send("Too many tries from this address. Wait 15 minutes and try again."),
-    );
-  });
+  app.post(
+    ["/sign-in", "/sign-up", "/forgot-password", "/reset-password/:token", "/invitation/:token"],
+    (request, response, next) => {
+      doors.consume(request.ip ?? "unknown").then(
+        () => next(),
+        () =>
+          response
+            .status(429)
+            .type("text/plain")
+            .send("Too many tries from this address. Wait 15 minutes and try again."),
+      );
+    },
+  );
 
-  app.all("*splat", createRequestHandler({ build: () => import("virtual:react-router/server-build"), mode: env().NODE_ENV }));
+  app.all(
+    "*splat",
+    createRequestHandler({ build: () => import("virtual:react-router/server-build"), mode: env().NODE_ENV }),
+  );
 
   const queue = startQueue(database().db, taskHandlers);
   const server = app.listen(PORT, (error) => {

@@ -29,7 +29,9 @@ export function notFound(noun: keyof typeof NOUNS): never {
 /** Yours, but not your job: 403. */
 export function requirePermission(scope: Scope, permission: Permission): void {
   if (!can(scope.role, permission))
-    throw data(`Your role does not let you ${PERMISSION_WORDS[permission]}. Ask the shop's owner.`, { status: 403 });
+    throw data(`Your role does not let you ${PERMISSION_WORDS[permission]}. Ask the shop's owner.`, {
+      status: 403,
+    });
 }
 
 /** An id out of an address. What cannot be an id is a missing thing, never a query. */

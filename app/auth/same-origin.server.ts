@@ -6,7 +6,10 @@ export function requireSameOrigin(request: Request, publicOrigin: string): void 
   const origin = request.headers.get("Origin");
   if (origin !== null && origin === new URL(publicOrigin).origin) return;
   if (request.headers.get("Sec-Fetch-Site") === "same-origin") return;
-  throw data("This request did not come from Castlenut's own pages. Open the page again and repeat it there.", {
-    status: 403,
-  });
+  throw data(
+    "This request did not come from Castlenut's own pages. Open the page again and repeat it there.",
+    {
+      status: 403,
+    },
+  );
 }

@@ -32,12 +32,21 @@ async function readSecret(request: Request): Promise<string | undefined> {
 }
 
 /** Starts a session for a person on this device and returns the Set-Cookie header. A former one on it ends. */
-export async function startSession(from: Anonymous, userId: UserId, request: Request, now: number): Promise<string> {
+export async function startSession(
+  from: Anonymous,
+  userId: UserId,
+  request: Request,
+  now: number,
+): Promise<string> {
   const former = await readSecret(request);
   const secret = newSecret();
   const user = from.db.select({ shopId: users.shopId }).from(users).where(eq(users.id, userId)).get();
   if (!user) throw new Error("a session needs a user");
-  if (former) from.db.delete(sessions).where(eq(sessions.tokenHash, hashSecret(former))).run();
+  if (former)
+    from.db
+      .delete(sessions)
+      .where(eq(sessions.tokenHash, hashSecret(former)))
+      .run();
   from.db
     .insert(sessions)
     .values({
@@ -56,7 +65,11 @@ export async function startSession(from: Anonymous, userId: UserId, request: Req
 /** Ends this device's session and returns the header that removes the cookie. */
 export async function endSession(from: Anonymous, request: Request): Promise<string> {
   const secret = await readSecret(request);
-  if (secret) from.db.delete(sessions).where(eq(sessions.tokenHash, hashSecret(secret))).run();
+  if (secret)
+    from.db
+      .delete(sessions)
+      .where(eq(sessions.tokenHash, hashSecret(secret)))
+      .run();
   return sessionCookie().serialize("", { maxAge: 0 });
 }
 
@@ -71,7 +84,11 @@ export function endSessionsOf(from: Readonly<{ db: Database }>, userId: UserId, 
 export type SignedIn = Readonly<{ scope: Scope; viewer: Viewer; sessionId: SessionId }>;
 
 /** Who sends this request; undefined when nobody is signed in. */
-export async function readSession(from: Anonymous, request: Request, now: number): Promise<SignedIn | undefined> {
+export async function readSession(
+  from: Anonymous,
+  request: Request,
+  now: number,
+): Promise<SignedIn | undefined> {
   const secret = await readSecret(request);
   if (!secret) return undefined;
   const row = from.db

@@ -20,7 +20,9 @@ export function signInAuthenticator(from: Anonymous): Authenticator<UserId> {
   const authenticator = new Authenticator<UserId>();
   authenticator.use(
     new FormStrategy(async ({ form }) => {
-      const email = String(form.get("email") ?? "").trim().toLowerCase();
+      const email = String(form.get("email") ?? "")
+        .trim()
+        .toLowerCase();
       const password = String(form.get("password") ?? "");
       const tried = await failures.get(email);
       if (tried !== null && tried.remainingPoints <= 0) throw new SignInRefused(TOO_MANY);

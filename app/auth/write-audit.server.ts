@@ -10,7 +10,8 @@ export function writeAudit(
 ): void {
   const actor =
     "userId" in scope
-      ? (scope.db.select({ name: users.name }).from(users).where(eq(users.id, scope.userId)).get()?.name ?? "?")
+      ? (scope.db.select({ name: users.name }).from(users).where(eq(users.id, scope.userId)).get()?.name ??
+        "?")
       : scope.by;
   scope.db
     .insert(auditLog)

@@ -1,7 +1,13 @@
 import type { SnapshotClip } from "./snapshot";
 
 /** The kept pieces of the clips in playing order, with where each begins in lesson time. Times in ms. */
-export type Piece = Readonly<{ recordingId: string; fromMs: number; toMs: number; lessonStartMs: number; clip: number }>;
+export type Piece = Readonly<{
+  recordingId: string;
+  fromMs: number;
+  toMs: number;
+  lessonStartMs: number;
+  clip: number;
+}>;
 
 /** Cuts a lesson's clips into the pieces that play. */
 export function piecesOf(clips: readonly SnapshotClip[]): Piece[] {
@@ -24,7 +30,11 @@ export function piecesOf(clips: readonly SnapshotClip[]): Piece[] {
 }
 
 /** Lesson time of a moment in a recording's file; null when the lesson does not play that moment. */
-export function lessonTime(clips: readonly SnapshotClip[], recordingId: string, fileMs: number): number | null {
+export function lessonTime(
+  clips: readonly SnapshotClip[],
+  recordingId: string,
+  fileMs: number,
+): number | null {
   const pieces = piecesOf(clips).filter((piece) => piece.recordingId === recordingId);
   const inside = pieces.find((piece) => fileMs >= piece.fromMs && fileMs < piece.toMs);
   if (inside) return inside.lessonStartMs + fileMs - inside.fromMs;
@@ -34,13 +44,17 @@ export function lessonTime(clips: readonly SnapshotClip[], recordingId: string, 
 }
 
 /** Where a moment of lesson time lies: the recording and the time in its file. Past the end: the end. */
-export function fileTime(clips: readonly SnapshotClip[], lessonMs: number): { recordingId: string; fileMs: number } | null {
+export function fileTime(
+  clips: readonly SnapshotClip[],
+  lessonMs: number,
+): { recordingId: string; fileMs: number } | null {
   const pieces = piecesOf(clips);
   const last = pieces.at(-1);
   if (!last) return null;
   const piece =
     pieces.find(
-      (piece) => lessonMs >= piece.lessonStartMs && lessonMs < piece.lessonStartMs + piece.toMs - piece.fromMs,
+      (piece) =>
+        lessonMs >= piece.lessonStartMs && lessonMs < piece.lessonStartMs + piece.toMs - piece.fromMs,
     ) ?? (lessonMs < 0 ? (pieces[0] ?? last) : last);
   const fileMs = piece.fromMs + Math.max(0, lessonMs - piece.lessonStartMs);
   return { recordingId: piece.recordingId, fileMs: Math.min(fileMs, piece.toMs) };

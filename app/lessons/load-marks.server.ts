@@ -21,7 +21,10 @@ function namesOf(scope: InShop): Map<string, string> {
 }
 
 /** The newest check of each mark as stored: outcome with the fingerprint that it vouches for. */
-export function newestChecks(scope: InShop, markIds: readonly MarkId[]): Map<string, Check & { fingerprint: string }> {
+export function newestChecks(
+  scope: InShop,
+  markIds: readonly MarkId[],
+): Map<string, Check & { fingerprint: string }> {
   const found = new Map<string, Check & { fingerprint: string }>();
   if (markIds.length === 0) return found;
   const rows = scope.db
@@ -113,18 +116,16 @@ export function loadMarks(scope: InShop, lessonId: LessonId): Mark[] {
       safetyCritical: mark.safetyCritical,
       needs: mark.needs,
       note: mark.note,
-      values: (values.get(mark.id) ?? []).map(
-        (row): MarkValue => ({
-          role: row.role,
-          action: row.action,
-          hardware: row.hardware,
-          text: row.text,
-          dimension: row.dimension as Dimension | null,
-          unit: row.unit as Unit | null,
-          value: row.value,
-          number: row.number,
-        }),
-      ),
+      values: (values.get(mark.id) ?? []).map((row): MarkValue => ({
+        role: row.role,
+        action: row.action,
+        hardware: row.hardware,
+        text: row.text,
+        dimension: row.dimension as Dimension | null,
+        unit: row.unit as Unit | null,
+        value: row.value,
+        number: row.number,
+      })),
       thread: mark.thread,
       propertyClass: mark.propertyClass,
       condition: mark.condition,

@@ -7,7 +7,13 @@ export type MarkState = "pencilled" | "inked" | "checked";
 export type Phase = "prepare" | "remove" | "inspect" | "install" | "verify";
 export type Side = "none" | "left" | "right" | "both";
 export type Condition =
-  "not-stated" | "as-supplied" | "clean-dry" | "oiled" | "named-lubricant" | "named-thread-locker" | "pre-coated";
+  | "not-stated"
+  | "as-supplied"
+  | "clean-dry"
+  | "oiled"
+  | "named-lubricant"
+  | "named-thread-locker"
+  | "pre-coated";
 export type Reuse = "not-stated" | "replace-always" | "reuse" | "reuse-if" | "measure-and-decide";
 export type TightenAt = "not-stated" | "hanging" | "ride-height" | "ride-height-by-jack";
 export type RunDown = "not-stated" | "included" | "add-what-the-wrench-shows";

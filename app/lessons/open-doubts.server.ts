@@ -5,7 +5,10 @@ import { doubts, users } from "#drizzle/schema/index";
 import type { OpenDoubt } from "./showing";
 
 /** Every open "This looks wrong" of these lessons. */
-export function openDoubts(scope: Readonly<{ db: Database; shopId: ShopId }>, lessonIds: readonly LessonId[]): OpenDoubt[] {
+export function openDoubts(
+  scope: Readonly<{ db: Database; shopId: ShopId }>,
+  lessonIds: readonly LessonId[],
+): OpenDoubt[] {
   if (lessonIds.length === 0) return [];
   return scope.db
     .select({
@@ -18,6 +21,12 @@ export function openDoubts(scope: Readonly<{ db: Database; shopId: ShopId }>, le
     })
     .from(doubts)
     .innerJoin(users, eq(users.id, doubts.raisedBy))
-    .where(and(eq(doubts.shopId, scope.shopId), inArray(doubts.lessonId, [...lessonIds]), isNull(doubts.clearedAt)))
+    .where(
+      and(
+        eq(doubts.shopId, scope.shopId),
+        inArray(doubts.lessonId, [...lessonIds]),
+        isNull(doubts.clearedAt),
+      ),
+    )
     .all();
 }

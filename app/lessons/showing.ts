@@ -10,10 +10,18 @@ import { holdsFigure, type Mark } from "./mark";
  * - "pencilled": never for learners.
  * - "plain": kinds without a figure (part, supply, caution, correction).
  */
-export type Showing = "checked" | "self-checked" | "unchecked" | "withheld" | "in-doubt" | "pencilled" | "plain";
+export type Showing =
+  "checked" | "self-checked" | "unchecked" | "withheld" | "in-doubt" | "pencilled" | "plain";
 
 /** An open "This looks wrong" on a mark. `stops` is true when an instructor or owner raised it. */
-export type OpenDoubt = Readonly<{ doubtId: string; markId: string; stops: boolean; by: string; reason: string; at: number }>;
+export type OpenDoubt = Readonly<{
+  doubtId: string;
+  markId: string;
+  stops: boolean;
+  by: string;
+  reason: string;
+  at: number;
+}>;
 
 export function showingOf(mark: Mark, doubts: readonly OpenDoubt[] = []): Showing {
   if (mark.state === "pencilled") return "pencilled";
@@ -27,7 +35,9 @@ export function showingOf(mark: Mark, doubts: readonly OpenDoubt[] = []): Showin
 
 /** A figure may be relied on: search answers first with it and the quiz asks it. */
 export function mayAnswer(showing: Showing): boolean {
-  return showing === "checked" || showing === "self-checked" || showing === "unchecked" || showing === "plain";
+  return (
+    showing === "checked" || showing === "self-checked" || showing === "unchecked" || showing === "plain"
+  );
 }
 
 /** The mark as it may leave the server for a learner: a withheld or doubted value goes without its figures and the words that say them. */

@@ -46,7 +46,12 @@ export type Snapshot = Readonly<{
   clips: readonly SnapshotClip[];
   chapters: readonly SnapshotChapter[];
   marks: readonly Mark[];
-  captionTracks: readonly Readonly<{ id: CaptionTrackId; recordingId: RecordingId; language: string; label: string }>[];
+  captionTracks: readonly Readonly<{
+    id: CaptionTrackId;
+    recordingId: RecordingId;
+    language: string;
+    label: string;
+  }>[];
 }>;
 
 export const SNAPSHOT_FORMAT = 1;
@@ -54,6 +59,7 @@ export const SNAPSHOT_FORMAT = 1;
 /** Reads a stored snapshot; an unknown format is a fault of ours, not of the reader. */
 export function readSnapshot(text: string): Snapshot {
   const snapshot = JSON.parse(text) as Snapshot;
-  if (snapshot.format !== SNAPSHOT_FORMAT) throw new Error(`snapshot format ${String(snapshot.format)} is unknown`);
+  if (snapshot.format !== SNAPSHOT_FORMAT)
+    throw new Error(`snapshot format ${String(snapshot.format)} is unknown`);
   return snapshot;
 }

@@ -6,7 +6,11 @@ import { addTask } from "~/queue/add-task.server";
 import type { Message } from "./message";
 
 /** Writes a mail into the outbox in the caller's transaction; a task sends it afterwards. */
-export function queueMail(scope: Readonly<{ db: Database; shopId: ShopId }>, message: Message, now: number): void {
+export function queueMail(
+  scope: Readonly<{ db: Database; shopId: ShopId }>,
+  message: Message,
+  now: number,
+): void {
   const mail = scope.db
     .insert(outbox)
     .values({

@@ -34,13 +34,20 @@ function takeTask(db: Database, now: number) {
 }
 
 /** Does one due task; false when there was none. A failure is kept with its sentence and tried again later. */
-export async function runNextTask(db: Database, handlers: TaskHandlers, clock: () => number): Promise<boolean> {
+export async function runNextTask(
+  db: Database,
+  handlers: TaskHandlers,
+  clock: () => number,
+): Promise<boolean> {
   const task = takeTask(db, clock());
   if (!task) return false;
   try {
     const scope: ShopScope = { db, shopId: task.shopId, by: `task ${task.kind}` };
     await handlers[task.kind as TaskKind](scope, task.payload, clock());
-    db.update(tasks).set({ doneAt: clock(), leaseUntil: null, lastError: null }).where(eq(tasks.id, task.id)).run();
+    db.update(tasks)
+      .set({ doneAt: clock(), leaseUntil: null, lastError: null })
+      .where(eq(tasks.id, task.id))
+      .run();
   } catch (error) {
     const now = clock();
     const sentence = error instanceof Error ? error.message : String(error);
@@ -60,7 +67,11 @@ export async function runNextTask(db: Database, handlers: TaskHandlers, clock: (
 }
 
 /** Works through due tasks one at a time until stopped. */
-export function startQueue(db: Database, handlers: TaskHandlers, everyMs = 500): { stop: () => Promise<void> } {
+export function startQueue(
+  db: Database,
+  handlers: TaskHandlers,
+  everyMs = 500,
+): { stop: () => Promise<void> } {
   let stopped = false;
   let wake: (() => void) | undefined;
   const running = (async () => {

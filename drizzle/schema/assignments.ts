@@ -19,10 +19,18 @@ export const assignments = sqliteTable(
   },
   (t) => [
     unique("assignments_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.assignedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    uniqueIndex("assignments_open").on(t.lessonId, t.userId).where(sql`withdrawn_at is null`),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.assignedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    uniqueIndex("assignments_open")
+      .on(t.lessonId, t.userId)
+      .where(sql`withdrawn_at is null`),
     index("assignments_user").on(t.userId),
     index("assignments_shop").on(t.shopId, t.dueOn),
   ],

@@ -6,8 +6,16 @@ import { revisions } from "./revisions";
 import { users } from "./users";
 
 export const ANSWER_OUTCOMES = [
-  "right", "right-other-unit", "within-tolerance", "wrong-unit", "superseded",
-  "other-fastener", "missing-angle", "other", "no-unit", "unreadable",
+  "right",
+  "right-other-unit",
+  "within-tolerance",
+  "wrong-unit",
+  "superseded",
+  "other-fastener",
+  "missing-angle",
+  "other",
+  "no-unit",
+  "unreadable",
 ] as const;
 
 /** One person's try at a lesson's quiz. Typed answers wait here until it is submitted. */
@@ -31,9 +39,16 @@ export const attempts = sqliteTable(
   },
   (t) => [
     unique("attempts_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.revisionId], foreignColumns: [revisions.shopId, revisions.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.revisionId],
+      foreignColumns: [revisions.shopId, revisions.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("attempts_user").on(t.userId, t.lessonId),
     index("attempts_lesson").on(t.lessonId, t.submittedAt),
   ],
@@ -58,7 +73,9 @@ export const answers = sqliteTable(
   },
   (t) => [
     unique("answers_once").on(t.attemptId, t.questionVersionId),
-    foreignKey({ columns: [t.shopId, t.attemptId], foreignColumns: [attempts.shopId, attempts.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.attemptId], foreignColumns: [attempts.shopId, attempts.id] }).onDelete(
+      "restrict",
+    ),
     foreignKey({
       columns: [t.shopId, t.questionVersionId],
       foreignColumns: [questionVersions.shopId, questionVersions.id],

@@ -25,8 +25,13 @@ export const captionTracks = sqliteTable(
   },
   (t) => [
     unique("caption_tracks_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.recordingId], foreignColumns: [recordings.shopId, recordings.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.recordingId],
+      foreignColumns: [recordings.shopId, recordings.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("caption_tracks_recording").on(t.recordingId),
   ],
 );
@@ -46,6 +51,9 @@ export const cues = sqliteTable(
   },
   (t) => [
     unique("cues_track_and_n").on(t.trackId, t.n),
-    foreignKey({ columns: [t.shopId, t.trackId], foreignColumns: [captionTracks.shopId, captionTracks.id] }).onDelete("cascade"),
+    foreignKey({
+      columns: [t.shopId, t.trackId],
+      foreignColumns: [captionTracks.shopId, captionTracks.id],
+    }).onDelete("cascade"),
   ],
 );

@@ -19,12 +19,19 @@ export const chapters = sqliteTable(
     title: text().notNull(),
     /** Null until a person names it; the publish gate stops on a chapter without one. */
     phase: text({ enum: PHASES }),
-    state: text({ enum: ["pencilled", "inked"] }).notNull().default("inked"),
+    state: text({ enum: ["pencilled", "inked"] })
+      .notNull()
+      .default("inked"),
   },
   (t) => [
     unique("chapters_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("cascade"),
-    foreignKey({ columns: [t.shopId, t.recordingId], foreignColumns: [recordings.shopId, recordings.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "cascade",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.recordingId],
+      foreignColumns: [recordings.shopId, recordings.id],
+    }).onDelete("restrict"),
     index("chapters_lesson").on(t.lessonId, t.startMs),
     check("chapters_forward", sql`${t.endMs} > ${t.startMs}`),
   ],

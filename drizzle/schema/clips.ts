@@ -17,8 +17,13 @@ export const clips = sqliteTable(
   },
   (t) => [
     unique("clips_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("cascade"),
-    foreignKey({ columns: [t.shopId, t.recordingId], foreignColumns: [recordings.shopId, recordings.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "cascade",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.recordingId],
+      foreignColumns: [recordings.shopId, recordings.id],
+    }).onDelete("restrict"),
     index("clips_lesson").on(t.lessonId, t.n),
     index("clips_recording").on(t.recordingId),
   ],
@@ -35,7 +40,9 @@ export const clipCuts = sqliteTable(
     toMs: integer().notNull(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.clipId], foreignColumns: [clips.shopId, clips.id] }).onDelete("cascade"),
+    foreignKey({ columns: [t.shopId, t.clipId], foreignColumns: [clips.shopId, clips.id] }).onDelete(
+      "cascade",
+    ),
     index("clip_cuts_clip").on(t.clipId),
   ],
 );

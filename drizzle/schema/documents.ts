@@ -35,8 +35,13 @@ export const citations = sqliteTable(
   },
   (t) => [
     unique("citations_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.documentId], foreignColumns: [documents.shopId, documents.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.readBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.documentId],
+      foreignColumns: [documents.shopId, documents.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.readBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("citations_document").on(t.documentId),
   ],
 );

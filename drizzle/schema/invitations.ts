@@ -20,7 +20,9 @@ export const invitations = sqliteTable(
   },
   (t) => [
     unique("invitations_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.invitedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.invitedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("invitations_email").on(t.shopId, t.email),
   ],
 );

@@ -5,8 +5,20 @@ import { users } from "./users";
 import { vehicles } from "./vehicles";
 
 export const SYSTEMS = [
-  "steering", "suspension", "brakes", "wheels", "engine", "cooling", "fuel", "electrical",
-  "high-voltage", "restraint", "air-conditioning", "driveline", "body", "workshop",
+  "steering",
+  "suspension",
+  "brakes",
+  "wheels",
+  "engine",
+  "cooling",
+  "fuel",
+  "electrical",
+  "high-voltage",
+  "restraint",
+  "air-conditioning",
+  "driveline",
+  "body",
+  "workshop",
 ] as const;
 
 /** The training unit. These rows are the draft; learners read revisions. */
@@ -31,7 +43,9 @@ export const lessons = sqliteTable(
   },
   (t) => [
     unique("lessons_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("lessons_shop").on(t.shopId, t.system),
   ],
 );
@@ -46,8 +60,12 @@ export const lessonVehicles = sqliteTable(
   },
   (t) => [
     primaryKey({ columns: [t.lessonId, t.vehicleId] }),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("cascade"),
-    foreignKey({ columns: [t.shopId, t.vehicleId], foreignColumns: [vehicles.shopId, vehicles.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "cascade",
+    ),
+    foreignKey({ columns: [t.shopId, t.vehicleId], foreignColumns: [vehicles.shopId, vehicles.id] }).onDelete(
+      "restrict",
+    ),
     index("lesson_vehicles_vehicle").on(t.vehicleId),
   ],
 );

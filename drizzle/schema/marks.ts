@@ -10,7 +10,13 @@ export const MARK_KINDS = ["torque", "tool", "measure", "part", "supply", "cauti
 export const MARK_STATES = ["pencilled", "inked", "checked"] as const;
 export const SIDES = ["none", "left", "right", "both"] as const;
 export const CONDITIONS = [
-  "not-stated", "as-supplied", "clean-dry", "oiled", "named-lubricant", "named-thread-locker", "pre-coated",
+  "not-stated",
+  "as-supplied",
+  "clean-dry",
+  "oiled",
+  "named-lubricant",
+  "named-thread-locker",
+  "pre-coated",
 ] as const;
 export const REUSE = ["not-stated", "replace-always", "reuse", "reuse-if", "measure-and-decide"] as const;
 export const TIGHTEN_AT = ["not-stated", "hanging", "ride-height", "ride-height-by-jack"] as const;
@@ -20,8 +26,27 @@ export const THREAD_DIRECTIONS = ["not-stated", "right", "left"] as const;
 export const WHEEL_LOADS = ["not-stated", "before-weight", "after-weight"] as const;
 export const SIGNAL_WORDS = ["DANGER", "WARNING", "CAUTION", "NOTICE"] as const;
 export const PART_RULES = ["not-stated", "replace", "reuse"] as const;
-export const VALUE_ROLES = ["value", "min", "max", "tolerance", "stage", "angle", "limit", "size", "drive", "measured"] as const;
-export const STEP_ACTIONS = ["seat", "torque", "loosen", "back-off", "angle", "wait", "turn-while-tightening"] as const;
+export const VALUE_ROLES = [
+  "value",
+  "min",
+  "max",
+  "tolerance",
+  "stage",
+  "angle",
+  "limit",
+  "size",
+  "drive",
+  "measured",
+] as const;
+export const STEP_ACTIONS = [
+  "seat",
+  "torque",
+  "loosen",
+  "back-off",
+  "angle",
+  "wait",
+  "turn-while-tightening",
+] as const;
 export const HARDWARE = ["either", "new", "reused"] as const;
 
 /** Something written down at one moment of a chapter. Ids live on through revisions. */
@@ -110,12 +135,26 @@ export const marks = sqliteTable(
   },
   (t) => [
     unique("marks_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("cascade"),
-    foreignKey({ columns: [t.shopId, t.chapterId], foreignColumns: [chapters.shopId, chapters.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.recordingId], foreignColumns: [recordings.shopId, recordings.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.citationId], foreignColumns: [citations.shopId, citations.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.inkedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "cascade",
+    ),
+    foreignKey({ columns: [t.shopId, t.chapterId], foreignColumns: [chapters.shopId, chapters.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.recordingId],
+      foreignColumns: [recordings.shopId, recordings.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.citationId],
+      foreignColumns: [citations.shopId, citations.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.createdBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.inkedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("marks_lesson").on(t.lessonId, t.recordingId, t.atMs),
     index("marks_chapter").on(t.chapterId),
     index("marks_component").on(t.shopId, t.componentKey),
@@ -145,7 +184,9 @@ export const markValues = sqliteTable(
   },
   (t) => [
     unique("mark_values_mark_and_n").on(t.markId, t.n),
-    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete("cascade"),
+    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete(
+      "cascade",
+    ),
   ],
 );
 
@@ -167,9 +208,16 @@ export const checks = sqliteTable(
     on: localDate().notNull(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.citationId], foreignColumns: [citations.shopId, citations.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.checkerId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.citationId],
+      foreignColumns: [citations.shopId, citations.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.checkerId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("checks_mark").on(t.markId, t.at),
   ],
 );
@@ -193,10 +241,18 @@ export const doubts = sqliteTable(
   },
   (t) => [
     unique("doubts_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.raisedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.clearedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.raisedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.clearedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("doubts_mark").on(t.markId),
     index("doubts_open").on(t.shopId, t.clearedAt),
   ],

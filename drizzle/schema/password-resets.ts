@@ -14,7 +14,9 @@ export const passwordResets = sqliteTable(
     usedAt: at(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("cascade"),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "cascade",
+    ),
     index("password_resets_user").on(t.userId),
   ],
 );

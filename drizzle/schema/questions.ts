@@ -21,8 +21,12 @@ export const questions = sqliteTable(
   (t) => [
     unique("questions_shop_and_id").on(t.shopId, t.id),
     unique("questions_mark_and_kind").on(t.markId, t.kind),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.markId], foreignColumns: [marks.shopId, marks.id] }).onDelete(
+      "restrict",
+    ),
     index("questions_lesson").on(t.lessonId),
   ],
 );
@@ -49,8 +53,14 @@ export const questionVersions = sqliteTable(
   (t) => [
     unique("question_versions_shop_and_id").on(t.shopId, t.id),
     unique("question_versions_once").on(t.questionId, t.revisionId),
-    foreignKey({ columns: [t.shopId, t.questionId], foreignColumns: [questions.shopId, questions.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.revisionId], foreignColumns: [revisions.shopId, revisions.id] }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.questionId],
+      foreignColumns: [questions.shopId, questions.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.revisionId],
+      foreignColumns: [revisions.shopId, revisions.id],
+    }).onDelete("restrict"),
     index("question_versions_revision").on(t.revisionId, t.n),
   ],
 );

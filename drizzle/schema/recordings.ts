@@ -3,7 +3,15 @@ import { at, id, idOf, shopId } from "./columns";
 import { shops } from "./shops";
 import { users } from "./users";
 
-export const RECORDING_STATES = ["uploading", "checking", "preparing", "ready", "needs-converting", "converting", "refused"] as const;
+export const RECORDING_STATES = [
+  "uploading",
+  "checking",
+  "preparing",
+  "ready",
+  "needs-converting",
+  "converting",
+  "refused",
+] as const;
 
 /** An uploaded video file and what was probed from it. */
 export const recordings = sqliteTable(
@@ -42,7 +50,9 @@ export const recordings = sqliteTable(
   },
   (t) => [
     unique("recordings_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.uploadedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.uploadedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("recordings_shop").on(t.shopId, t.deletedAt),
   ],
 );

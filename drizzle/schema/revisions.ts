@@ -21,8 +21,12 @@ export const revisions = sqliteTable(
   (t) => [
     unique("revisions_shop_and_id").on(t.shopId, t.id),
     unique("revisions_lesson_and_n").on(t.lessonId, t.n),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.publishedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.publishedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("revisions_shop").on(t.shopId, t.publishedAt),
   ],
 );

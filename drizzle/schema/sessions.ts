@@ -16,7 +16,9 @@ export const sessions = sqliteTable(
     expiresAt: at().notNull(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("cascade"),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "cascade",
+    ),
     index("sessions_user").on(t.userId),
   ],
 );

@@ -5,10 +5,14 @@ import { at, id } from "./columns";
 export const shops = sqliteTable("shops", {
   id: id<"shop">(),
   name: text().notNull(),
-  country: text({ enum: ["US", "GB", "IE", "AU", "NZ", "CA", "ZA", "IN", "EU"] }).notNull().default("US"),
+  country: text({ enum: ["US", "GB", "IE", "AU", "NZ", "CA", "ZA", "IN", "EU"] })
+    .notNull()
+    .default("US"),
   timeZone: text().notNull().default("America/Chicago"),
   /** Which unit comes first for people who have not chosen. */
-  preferredUnits: text({ enum: ["metric", "inch"] }).notNull().default("inch"),
+  preferredUnits: text({ enum: ["metric", "inch"] })
+    .notNull()
+    .default("inch"),
   /** Fraction of questions that must be right. */
   passMark: real().notNull().default(0.8),
   /** Fraction of a lesson that counts as seen. */

@@ -23,8 +23,12 @@ export const signOffRequests = sqliteTable(
   },
   (t) => [
     unique("sign_off_requests_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
     index("sign_off_requests_open").on(t.shopId, t.answeredAt),
     index("sign_off_requests_user").on(t.userId, t.lessonId),
   ],
@@ -51,11 +55,23 @@ export const signOffs = sqliteTable(
   },
   (t) => [
     unique("sign_offs_shop_and_id").on(t.shopId, t.id),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.revisionId], foreignColumns: [revisions.shopId, revisions.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.signedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.requestId], foreignColumns: [signOffRequests.shopId, signOffRequests.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.revisionId],
+      foreignColumns: [revisions.shopId, revisions.id],
+    }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.signedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.requestId],
+      foreignColumns: [signOffRequests.shopId, signOffRequests.id],
+    }).onDelete("restrict"),
     index("sign_offs_user").on(t.userId, t.lessonId),
     index("sign_offs_shop").on(t.shopId, t.at),
   ],
@@ -73,7 +89,11 @@ export const signOffRevocations = sqliteTable(
     at: at().notNull(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.signOffId], foreignColumns: [signOffs.shopId, signOffs.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.revokedBy], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.signOffId], foreignColumns: [signOffs.shopId, signOffs.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.revokedBy], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
   ],
 );

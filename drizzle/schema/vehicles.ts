@@ -15,5 +15,8 @@ export const vehicles = sqliteTable(
     drive: text().notNull().default(""),
     createdAt: at().notNull(),
   },
-  (t) => [unique("vehicles_shop_and_id").on(t.shopId, t.id), index("vehicles_shop").on(t.shopId, t.make, t.model)],
+  (t) => [
+    unique("vehicles_shop_and_id").on(t.shopId, t.id),
+    index("vehicles_shop").on(t.shopId, t.make, t.model),
+  ],
 );

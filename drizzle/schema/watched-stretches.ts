@@ -21,10 +21,20 @@ export const watchedStretches = sqliteTable(
     at: at().notNull(),
   },
   (t) => [
-    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.revisionId], foreignColumns: [revisions.shopId, revisions.id] }).onDelete("restrict"),
-    foreignKey({ columns: [t.shopId, t.recordingId], foreignColumns: [recordings.shopId, recordings.id] }).onDelete("restrict"),
+    foreignKey({ columns: [t.shopId, t.userId], foreignColumns: [users.shopId, users.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({ columns: [t.shopId, t.lessonId], foreignColumns: [lessons.shopId, lessons.id] }).onDelete(
+      "restrict",
+    ),
+    foreignKey({
+      columns: [t.shopId, t.revisionId],
+      foreignColumns: [revisions.shopId, revisions.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      columns: [t.shopId, t.recordingId],
+      foreignColumns: [recordings.shopId, recordings.id],
+    }).onDelete("restrict"),
     index("watched_stretches_user").on(t.userId, t.lessonId, t.at),
     index("watched_stretches_lesson").on(t.lessonId),
     check("watched_stretches_forward", sql`${t.toMs} > ${t.fromMs}`),

@@ -6,7 +6,15 @@ export function Brand() {
         <polygon points="33,18 25.5,30.99 10.5,30.99 3,18 10.5,5.01 25.5,5.01" className="fill-brass-tint" />
         <circle cx={18} cy={18} r={5.2} className="fill-enamel-deep" />
         {[0, 60, 120, 180, 240, 300].map((turn) => (
-          <rect key={turn} x={16} y={4} width={4} height={5.6} transform={`rotate(${turn} 18 18)`} className="fill-enamel-deep" />
+          <rect
+            key={turn}
+            x={16}
+            y={4}
+            width={4}
+            height={5.6}
+            transform={`rotate(${turn} 18 18)`}
+            className="fill-enamel-deep"
+          />
         ))}
       </svg>
       Castlenut

@@ -25,7 +25,13 @@ function UnitSwitch({ viewer }: { viewer: Viewer }) {
     </button>
   );
   return (
-    <Form method="post" action={href("/api/units")} className="inline-flex overflow-hidden rounded border border-on-graphite-soft" aria-label="Which unit comes first" preventScrollReset>
+    <Form
+      method="post"
+      action={href("/api/units")}
+      className="inline-flex overflow-hidden rounded border border-on-graphite-soft"
+      aria-label="Which unit comes first"
+      preventScrollReset
+    >
       <input type="hidden" name="to" value={pathname + search} />
       {button("metric", "N·m")}
       {button("inch", "lbf·ft")}
@@ -43,7 +49,10 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
   const places = PLACES.filter((place) => can(viewer.role, place.permission));
   return (
     <>
-      <a href="#content" className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-sheet focus:px-4 focus:py-3">
+      <a
+        href="#content"
+        className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-sheet focus:px-4 focus:py-3"
+      >
         Skip to the content
       </a>
       <header className="no-print bg-enamel-deep text-on-graphite">
@@ -84,8 +93,8 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
         {children}
       </main>
       <footer className="no-print mx-auto max-w-[1440px] px-4 pb-8 text-sm text-ink-soft sm:px-7">
-        {viewer.shopName}. Values are the shop's own record: before tightening, compare with the vehicle maker's current service
-        information for this chassis number. If they differ, the maker's is right.
+        {viewer.shopName}. Values are the shop's own record: before tightening, compare with the vehicle
+        maker's current service information for this chassis number. If they differ, the maker's is right.
       </footer>
     </>
   );

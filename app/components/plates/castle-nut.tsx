@@ -25,7 +25,9 @@ function Slot({ turn, filled }: { turn: number; filled: boolean }) {
 
 /** The words for a state, for people who do not see the drawing. */
 export function nutWords(state: NutState): string {
-  const reached = [state.seen && "seen", state.answered && "answered", state.shown && "shown"].filter(Boolean);
+  const reached = [state.seen && "seen", state.answered && "answered", state.shown && "shown"].filter(
+    Boolean,
+  );
   const words = reached.length === 0 ? "not started" : reached.join(", ");
   return state.changedSince ? `${words}; changed since` : words;
 }

@@ -22,7 +22,14 @@ function useFieldParts(name: string, hint: React.ReactNode, refusal: Refusal) {
   return { id, error, control };
 }
 
-function Around(props: { id: string; label: string; hint?: React.ReactNode; error?: string | undefined; className?: string; children: React.ReactNode }) {
+function Around(props: {
+  id: string;
+  label: string;
+  hint?: React.ReactNode;
+  error?: string | undefined;
+  className?: string;
+  children: React.ReactNode;
+}) {
   return (
     <div className={`grid content-start gap-1 ${props.className ?? ""}`}>
       <label htmlFor={props.id} className="text-sm font-semibold text-ink-soft">
@@ -44,7 +51,15 @@ function Around(props: { id: string; label: string; hint?: React.ReactNode; erro
 }
 
 /** A labelled text input; shows the error beside it and keeps what was typed. */
-export function Field({ label, name, hint, refusal, className, defaultValue, ...rest }: Common & Omit<React.ComponentProps<"input">, "name">) {
+export function Field({
+  label,
+  name,
+  hint,
+  refusal,
+  className,
+  defaultValue,
+  ...rest
+}: Common & Omit<React.ComponentProps<"input">, "name">) {
   const { id, error, control } = useFieldParts(name, hint, refusal);
   return (
     <Around id={id} label={label} hint={hint} error={error} className={className ?? ""}>
@@ -53,18 +68,41 @@ export function Field({ label, name, hint, refusal, className, defaultValue, ...
   );
 }
 
-export function TextArea({ label, name, hint, refusal, className, defaultValue, ...rest }: Common & Omit<React.ComponentProps<"textarea">, "name">) {
+export function TextArea({
+  label,
+  name,
+  hint,
+  refusal,
+  className,
+  defaultValue,
+  ...rest
+}: Common & Omit<React.ComponentProps<"textarea">, "name">) {
   const { id, error, control } = useFieldParts(name, hint, refusal);
   return (
     <Around id={id} label={label} hint={hint} error={error} className={className ?? ""}>
-      <textarea className={CONTROL} rows={3} defaultValue={refusal?.typed[name] ?? defaultValue} {...rest} {...control} />
+      <textarea
+        className={CONTROL}
+        rows={3}
+        defaultValue={refusal?.typed[name] ?? defaultValue}
+        {...rest}
+        {...control}
+      />
     </Around>
   );
 }
 
 export type Option = Readonly<{ value: string; label: string }>;
 
-export function Select({ label, name, hint, refusal, className, defaultValue, options, ...rest }: Common & { options: readonly Option[] } & Omit<React.ComponentProps<"select">, "name">) {
+export function Select({
+  label,
+  name,
+  hint,
+  refusal,
+  className,
+  defaultValue,
+  options,
+  ...rest
+}: Common & { options: readonly Option[] } & Omit<React.ComponentProps<"select">, "name">) {
   const { id, error, control } = useFieldParts(name, hint, refusal);
   return (
     <Around id={id} label={label} hint={hint} error={error} className={className ?? ""}>
@@ -80,17 +118,40 @@ export function Select({ label, name, hint, refusal, className, defaultValue, op
 }
 
 /** A checkbox with its sentence; its value is "yes". */
-export function Checkbox({ label, name, hint, refusal, className, defaultChecked, ...rest }: Common & Omit<React.ComponentProps<"input">, "name">) {
+export function Checkbox({
+  label,
+  name,
+  hint,
+  refusal,
+  className,
+  defaultChecked,
+  ...rest
+}: Common & Omit<React.ComponentProps<"input">, "name">) {
   const { id, error, control } = useFieldParts(name, hint, refusal);
   const checked = refusal ? refusal.typed[name] === "yes" : defaultChecked;
   return (
     <div className={`grid gap-1 ${className ?? ""}`}>
       <div className="flex min-h-11 items-center gap-3">
-        <input type="checkbox" value="yes" className="size-5 accent-enamel" defaultChecked={checked} {...rest} {...control} />
+        <input
+          type="checkbox"
+          value="yes"
+          className="size-5 accent-enamel"
+          defaultChecked={checked}
+          {...rest}
+          {...control}
+        />
         <label htmlFor={id}>{label}</label>
       </div>
-      {hint ? <p id={`${id}-hint`} className="text-sm text-ink-soft">{hint}</p> : null}
-      {error ? <p id={`${id}-error`} className="text-sm font-semibold text-error">{error}</p> : null}
+      {hint ? (
+        <p id={`${id}-hint`} className="text-sm text-ink-soft">
+          {hint}
+        </p>
+      ) : null}
+      {error ? (
+        <p id={`${id}-error`} className="text-sm font-semibold text-error">
+          {error}
+        </p>
+      ) : null}
     </div>
   );
 }

@@ -1,5 +1,11 @@
 /** The usual page: one heading, what belongs beside it, then the content. */
-export function Page({ title, under, actions, children, narrow = false }: {
+export function Page({
+  title,
+  under,
+  actions,
+  children,
+  narrow = false,
+}: {
   title: React.ReactNode;
   under?: React.ReactNode;
   actions?: React.ReactNode;
