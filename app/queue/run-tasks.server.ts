@@ -1,5 +1,5 @@
-import { and, asc, eq, isNull, lte, or, sql } from "drizzle-orm";
-import type { Database } from "~/db.server";
+import { and, asc, eq, inArray, isNull, lte, notInArray, or, sql } from "drizzle-orm";
+import { inTransaction, type Database } from "~/db.server";
 import { tasks } from "#drizzle/schema/index";
 import type { ShopScope } from "~/auth/scope.server";
 import type { TaskKind } from "./add-task.server";
@@ -10,27 +10,37 @@ export type TaskHandlers = Readonly<Record<TaskKind, TaskHandler>>;
 const LEASE_MS = 15 * 60_000;
 const TRIES = 5;
 
-/** Takes the next due task under a lease; a worker that dies gives it back when the lease ends. */
-function takeTask(db: Database, now: number) {
-  const due = db
-    .select({ id: tasks.id })
-    .from(tasks)
-    .where(
-      and(
-        isNull(tasks.doneAt),
-        isNull(tasks.failedAt),
-        lte(tasks.runAt, now),
-        or(isNull(tasks.leaseUntil), lte(tasks.leaseUntil, now)),
-      ),
-    )
-    .orderBy(asc(tasks.runAt))
-    .limit(1);
-  return db
-    .update(tasks)
-    .set({ leaseUntil: now + LEASE_MS, attempts: sql`${tasks.attempts} + 1` })
-    .where(eq(tasks.id, sql`(${due})`))
-    .returning()
-    .get();
+/** Kinds that keep a processor busy for minutes: one at a time, and never in the way of a mail. */
+const HEAVY: TaskKind[] = ["prepare-recording", "convert-recording"];
+
+export type Lane = "light" | "heavy";
+
+/** Takes the next due task of a lane under a lease; a worker that dies gives it back when the lease ends. */
+function takeTask(db: Database, lane: Lane, now: number) {
+  return inTransaction({ db }, (scope) => {
+    const due = scope.db
+      .select({ id: tasks.id })
+      .from(tasks)
+      .where(
+        and(
+          lane === "heavy" ? inArray(tasks.kind, HEAVY) : notInArray(tasks.kind, HEAVY),
+          isNull(tasks.doneAt),
+          isNull(tasks.failedAt),
+          lte(tasks.runAt, now),
+          or(isNull(tasks.leaseUntil), lte(tasks.leaseUntil, now)),
+        ),
+      )
+      .orderBy(asc(tasks.runAt))
+      .limit(1)
+      .get();
+    if (!due) return undefined;
+    return scope.db
+      .update(tasks)
+      .set({ leaseUntil: now + LEASE_MS, attempts: sql`${tasks.attempts} + 1` })
+      .where(eq(tasks.id, due.id))
+      .returning()
+      .get();
+  });
 }
 
 /** Does one due task; false when there was none. A failure is kept with its sentence and tried again later. */
@@ -66,17 +76,18 @@ export async function runNextTask(
   return true;
 }
 
-/** Works through due tasks one at a time until stopped. */
-export function startQueue(
+/** Works through one lane's due tasks, one at a time, until stopped. */
+function startLane(
   db: Database,
   handlers: TaskHandlers,
-  everyMs = 500,
+  lane: Lane,
+  everyMs: number,
 ): { stop: () => Promise<void> } {
   let stopped = false;
   let wake: (() => void) | undefined;
   const running = (async () => {
     while (!stopped) {
-      const worked = await runNextTask(db, handlers, Date.now).catch((error: unknown) => {
+      const worked = await runNextTask(db, handlers, Date.now, lane).catch((error: unknown) => {
         console.error("queue:", error);
         return false;
       });
@@ -93,6 +104,20 @@ export function startQueue(
       stopped = true;
       wake?.();
       await running;
+    },
+  };
+}
+
+/** Works through due tasks until stopped: light ones and heavy ones side by side. */
+export function startQueue(
+  db: Database,
+  handlers: TaskHandlers,
+  everyMs = 500,
+): { stop: () => Promise<void> } {
+  const lanes = [startLane(db, handlers, "light", everyMs), startLane(db, handlers, "heavy", everyMs)];
+  return {
+    stop: async () => {
+      await Promise.all(lanes.map((lane) => lane.stop()));
     },
   };
 }
