@@ -27,3 +27,10 @@ export function readMoment(search: URLSearchParams): number {
 export function momentParam(ms: number): string {
   return String(Math.round(ms / 100) / 10);
 }
+
+/** Like `formatTimecode`, with as many decimals as the moment needs, so that it reads back exactly: 764350 → "12:44.35". */
+export function formatExactTimecode(ms: number): string {
+  const whole = Math.max(0, Math.round(ms));
+  const rest = whole % 1000;
+  return formatTimecode(whole) + (rest === 0 ? "" : `.${String(rest).padStart(3, "0").replace(/0+$/, "")}`);
+}
