@@ -43,13 +43,14 @@ function takeTask(db: Database, lane: Lane, now: number) {
   });
 }
 
-/** Does one due task; false when there was none. A failure is kept with its sentence and tried again later. */
+/** Does one due task of a lane; false when there was none. A failure is kept with its sentence and tried again later. */
 export async function runNextTask(
   db: Database,
   handlers: TaskHandlers,
   clock: () => number,
+  lane: Lane = "light",
 ): Promise<boolean> {
-  const task = takeTask(db, clock());
+  const task = takeTask(db, lane, clock());
   if (!task) return false;
   try {
     const scope: ShopScope = { db, shopId: task.shopId, by: `task ${task.kind}` };
