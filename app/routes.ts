@@ -15,6 +15,15 @@ export default [
     index("routes/library/library.tsx"),
 
     // Each person: what to learn, what is learned.
+    route("training", "routes/training/my-training.tsx"),
+    route("training/sign-off-requests/new", "routes/training/sign-off-request.tsx"),
+
+    // Who teaches: assign, sign off, see who has shown what.
+    route("training/assign", "routes/training/assign.tsx"),
+    route("training/sign-offs", "routes/training/sign-offs.tsx"),
+    route("training/people/:userId/lessons/:lessonId/sign-off", "routes/training/sign-off.tsx"),
+    route("skills", "routes/training/skills.tsx"),
+    route("skills/:userId/:lessonId", "routes/training/skill.tsx"),
 
     // Instructors and owners: from recording to lesson.
 
