@@ -26,6 +26,8 @@ export default [
     route("skills/:userId/:lessonId", "routes/training/skill.tsx"),
 
     // Instructors and owners: from recording to lesson.
+    route("bench/lessons/:lessonId/captions", "routes/bench/captions.tsx"),
+    route("bench/lessons/:lessonId/captions/:trackId/original", "routes/bench/caption-original.ts"),
 
     // Owners: people, shop.
     route("account", "routes/team/account.tsx"),
@@ -33,7 +35,11 @@ export default [
     route("settings", "routes/team/settings.tsx"),
 
     // Answers for programs, not pages.
-    ...prefix("api", [route("units", "routes/api/units.ts")]),
+    ...prefix("api", [
+      route("lessons/:lessonId/captions/:trackId.vtt", "routes/api/caption-track.ts"),
+      route("lessons/:lessonId/chapters.vtt", "routes/api/chapters.ts"),
+      route("units", "routes/api/units.ts"),
+    ]),
   ]),
 
   route("healthz", "routes/api/health.ts"),
