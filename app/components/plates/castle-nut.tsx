@@ -1,24 +1,48 @@
 /** How far a person is with a lesson. */
 export type NutState = Readonly<{ seen: boolean; answered: boolean; shown: boolean; changedSince?: boolean }>;
 
-// A castle nut from above: a hexagon with six slots cut into the rim; three of them carry the progress.
-const RADIUS = 15;
-const CORNERS = [0, 1, 2, 3, 4, 5].map((n) => {
-  const angle = (Math.PI / 3) * n;
-  return [18 + RADIUS * Math.cos(angle), 18 + RADIUS * Math.sin(angle)] as const;
-});
-const OUTLINE = CORNERS.map(([x, y]) => `${x.toFixed(2)},${y.toFixed(2)}`).join(" ");
+// A castle nut from above: a hexagon with slots cut into the rim, one in the middle of every second flat.
+// Drawn once, in a square of 36 with the nut's middle at 18, 18; logo and progress glyph share it.
+const RADIUS = 16;
+const FLAT = RADIUS * Math.cos(Math.PI / 6);
+const SLOT = { width: 6.4, depth: 5.2 } as const;
+/** Where the slots stand, clockwise from the top, in degrees. */
+export const SLOT_TURNS = [0, 120, 240] as const;
+export const HOLE_RADIUS = 5;
 
-function Slot({ turn, filled }: { turn: number; filled: boolean }) {
+function turned(turn: number, x: number, y: number): string {
+  const angle = (turn * Math.PI) / 180;
+  const [sin, cos] = [Math.sin(angle), Math.cos(angle)];
+  return `${(18 + x * cos - y * sin).toFixed(2)} ${(18 + x * sin + y * cos).toFixed(2)}`;
+}
+
+/** The outline with its slots cut in, as an SVG path. */
+export const NUT_PATH = [0, 60, 120, 180, 240, 300]
+  .map((turn, n) => {
+    const half = SLOT.width / 2;
+    const corner = `${n === 0 ? "M" : "L"}${turned(turn, -RADIUS / 2, -FLAT)}`;
+    if (turn % 120 !== 0) return corner;
+    const cut = [
+      turned(turn, -half, -FLAT),
+      turned(turn, -half, -FLAT + SLOT.depth),
+      turned(turn, half, -FLAT + SLOT.depth),
+      turned(turn, half, -FLAT),
+    ];
+    return `${corner}L${cut.join("L")}`;
+  })
+  .join("")
+  .concat("Z");
+
+function Key({ turn }: { turn: number }) {
   return (
     <rect
-      x={15.6}
-      y={4.2}
-      width={4.8}
-      height={6.2}
+      x={18 - SLOT.width / 2 + 0.6}
+      y={18 - FLAT - 1.2}
+      width={SLOT.width - 1.2}
+      height={SLOT.depth + 0.6}
+      rx={0.8}
       transform={`rotate(${turn} 18 18)`}
-      className={filled ? "fill-enamel stroke-enamel" : "fill-paper stroke-line-strong"}
-      strokeWidth={1}
+      className="fill-enamel-text"
     />
   );
 }
@@ -32,20 +56,25 @@ export function nutWords(state: NutState): string {
   return state.changedSince ? `${words}; changed since` : words;
 }
 
-/** The progress glyph: the slots fill in turn, seen, answered, shown; dashed when the lesson changed since. */
+/**
+ * The progress glyph: the open slots fill in turn, clockwise from the top: seen, answered, shown. Filled body when all
+ * three are; a dashed outline when the lesson changed since.
+ */
 export function CastleNut({ state, size = 36 }: { state: NutState; size?: number }) {
+  const all = state.seen && state.answered && state.shown;
   return (
     <svg viewBox="0 0 36 36" width={size} height={size} role="img" aria-label={nutWords(state)}>
-      <polygon
-        points={OUTLINE}
-        className="fill-sheet stroke-ink"
-        strokeWidth={1.5}
-        {...(state.changedSince ? { strokeDasharray: "3 2" } : {})}
+      <path
+        d={NUT_PATH}
+        className={`stroke-ink ${all ? "fill-enamel-tint" : "fill-sheet"}`}
+        strokeWidth={1.4}
+        strokeLinejoin="round"
+        {...(state.changedSince ? { strokeDasharray: "3 2.2" } : {})}
       />
-      <circle cx={18} cy={18} r={5} className="fill-none stroke-ink" strokeWidth={1.2} />
-      <Slot turn={0} filled={state.seen} />
-      <Slot turn={120} filled={state.answered} />
-      <Slot turn={240} filled={state.shown} />
+      <circle cx={18} cy={18} r={HOLE_RADIUS} className="fill-paper stroke-ink" strokeWidth={1.2} />
+      {state.seen ? <Key turn={SLOT_TURNS[0]} /> : null}
+      {state.answered ? <Key turn={SLOT_TURNS[1]} /> : null}
+      {state.shown ? <Key turn={SLOT_TURNS[2]} /> : null}
     </svg>
   );
 }
