@@ -16,6 +16,10 @@ export default [
 
     // Each person: what to learn, what is learned.
     route("training", "routes/training/my-training.tsx"),
+    route("lessons/:lessonId/quiz", "routes/training/quiz.tsx"),
+    route("training/attempts/:attemptId", "routes/training/attempt.tsx"),
+    route("training/attempts/:attemptId/review", "routes/training/attempt-review.tsx"),
+    route("training/attempts/:attemptId/result", "routes/training/attempt-result.tsx"),
     route("training/sign-off-requests/new", "routes/training/sign-off-request.tsx"),
 
     // Who teaches: assign, sign off, see who has shown what.
@@ -26,6 +30,7 @@ export default [
     route("skills/:userId/:lessonId", "routes/training/skill.tsx"),
 
     // Instructors and owners: from recording to lesson.
+    route("bench/lessons/:lessonId/questions", "routes/bench/questions.tsx"),
     route("bench/lessons/:lessonId/captions", "routes/bench/captions.tsx"),
     route("bench/lessons/:lessonId/captions/:trackId/original", "routes/bench/caption-original.ts"),
 
