@@ -9,6 +9,8 @@ const NOUNS = {
   captions: "Those captions are not in your shop.",
   chapter: "That chapter is not in this lesson.",
   value: "That value is not in this lesson.",
+  document: "That document is not in your shop.",
+  vehicle: "That vehicle is not in your shop.",
   quiz: "That quiz is not in your shop.",
   attempt: "That attempt is not yours, or it is gone.",
   assignment: "That assignment is not in your shop.",

@@ -1,5 +1,10 @@
 import type { Mark } from "./mark";
 
+/** "M12 × 1.75" and "m12x1.75" are one thread. */
+function sameThread(thread: string): string {
+  return thread.toLowerCase().replace(/\s+/g, "").replace(/[×*]/g, "x");
+}
+
 /**
  * What a check vouches for, as one string: values, component, thread, condition, rules and source.
  * Two marks with equal fingerprints say the same; another spelling or unit of the same value changes nothing,
@@ -20,7 +25,7 @@ export function fingerprintOf(mark: Mark): string {
     mark.side,
     mark.position.trim().toLowerCase(),
     mark.applies,
-    mark.thread,
+    sameThread(mark.thread),
     mark.propertyClass,
     mark.condition,
     mark.conditionDetail,
