@@ -81,14 +81,16 @@ function readFraction(s: string, i: number): Fraction | Refusal | null {
   return { n, d, end };
 }
 
+function thousands(groups: readonly string[]): boolean {
+  return /^[1-9]\d{0,2}$/.test(groups[0] ?? "") && groups.slice(1).every((group) => /^\d{3}$/.test(group));
+}
+
 function readDecimal(s: string, i: number): NumberFound | Refusal {
   let end = i;
   while (isDigit(s[end]) || ((s[end] === "." || s[end] === ",") && isDigit(s[end + 1]))) end++;
   const typed = s.slice(i, end);
   const commas = typed.split(",");
   const points = typed.split(".");
-  const thousands = (groups: readonly string[]) =>
-    /^[1-9]\d{0,2}$/.test(groups[0] ?? "") && groups.slice(1).every((group) => /^\d{3}$/.test(group));
   let plain: string;
   if (commas.length === 1 && points.length <= 2) plain = typed;
   else if (commas.length === 2 && points.length === 1) {

@@ -199,7 +199,7 @@ export const PHRASES = {
     "finally",
     "final",
   ]),
-  then: longestFirst([
+  separators: longestFirst([
     "and then",
     "then",
     "followed by",

@@ -128,7 +128,7 @@ class Reader {
       const before = this.pos;
       if (s[this.pos] === "." && (s[this.pos + 1] === " " || this.pos + 1 >= s.length))
         this.pos = skip(s, this.pos + 1);
-      else if (this.take(PHRASES.then)) {
+      else if (this.take(PHRASES.separators)) {
         const word = s.slice(before, this.pos).trim();
         if (word === "+" || /^plus$/i.test(word) || link === "plus") link = "plus";
         else if (word === "," && link === null) link = "comma";

@@ -238,7 +238,7 @@ export function withoutUnit(r: Reading, scanned: Scanned): Refusal {
   const question = unitQuestion(r.options.dimension ?? "torque");
   const next = skip(r.s, scanned.end);
   const word = /^[^\s\d,;()+]{1,24}/.exec(r.source.slice(next, next + 24))?.[0];
-  if (word && /[^.\-]/.test(word))
+  if (word && /[^.-]/.test(word))
     return refuse("unknown-unit", next, `“${word}” is not a unit known here. ${typed}: ${question}`);
   return refuse("no-unit", scanned.end, `${typed} has no unit: ${question}`);
 }
