@@ -13,6 +13,7 @@ export default [
   layout("routes/shell.tsx", [
     // Everybody: find, watch.
     index("routes/library/library.tsx"),
+    route("lessons/:lessonId", "routes/library/lesson.tsx"),
 
     // Each person: what to learn, what is learned.
     route("training", "routes/training/my-training.tsx"),
@@ -30,6 +31,11 @@ export default [
     route("skills/:userId/:lessonId", "routes/training/skill.tsx"),
 
     // Instructors and owners: from recording to lesson.
+    route("bench", "routes/bench/bench.tsx"),
+    route("bench/lessons/new", "routes/bench/lesson-new.tsx"),
+    route("bench/lessons/:lessonId", "routes/bench/lesson.tsx"),
+    route("bench/lessons/:lessonId/marks/new", "routes/bench/mark-new.tsx"),
+    route("bench/lessons/:lessonId/marks/:markId", "routes/bench/mark.tsx"),
     route("bench/lessons/:lessonId/questions", "routes/bench/questions.tsx"),
     route("bench/lessons/:lessonId/captions", "routes/bench/captions.tsx"),
     route("bench/lessons/:lessonId/captions/:trackId/original", "routes/bench/caption-original.ts"),
@@ -44,6 +50,7 @@ export default [
       route("lessons/:lessonId/captions/:trackId.vtt", "routes/api/caption-track.ts"),
       route("lessons/:lessonId/chapters.vtt", "routes/api/chapters.ts"),
       route("units", "routes/api/units.ts"),
+      route("watched", "routes/api/watched.ts"),
     ]),
   ]),
 

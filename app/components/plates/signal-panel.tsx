@@ -21,11 +21,14 @@ export function SignalPanel({
   word,
   words,
   reason = "",
+  small = false,
   foot,
 }: {
   word: SignalWord;
   words: string;
   reason?: string;
+  /** Over the picture. */
+  small?: boolean;
   foot?: React.ReactNode;
 }) {
   return (
@@ -35,13 +38,13 @@ export function SignalPanel({
       className="overflow-hidden rounded border-[3px] border-signal-frame bg-signal-sheet text-signal-frame outline outline-1 outline-line-strong"
     >
       <p
-        className={`flex items-center gap-2 border-b-[3px] border-signal-frame px-3 py-1 font-figure text-2xl leading-tight font-semibold ${BANDS[word]}`}
+        className={`flex items-center gap-2 border-b-[3px] border-signal-frame px-3 py-1 font-figure leading-tight font-semibold ${small ? "text-lg" : "text-2xl"} ${BANDS[word]}`}
       >
         {word === "NOTICE" ? null : <AlertTriangle />}
         {word}
       </p>
       <div className="signal-in px-3 py-2">
-        <p className="text-lg leading-snug font-semibold">{words}</p>
+        <p className={`leading-snug font-semibold ${small ? "text-sm" : "text-lg"}`}>{words}</p>
         {reason === "" ? null : <p>{reason}</p>}
         {foot === undefined ? null : <div className="flex flex-wrap gap-x-5">{foot}</div>}
       </div>
