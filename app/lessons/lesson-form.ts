@@ -59,18 +59,20 @@ function ticked(form: Readonly<Record<string, unknown>>, prefix: string): string
 }
 
 /** Title, system, position, vehicles and summary of a lesson on the bench. */
-export const LessonForm = z.looseObject({ ...details, version: draftVersion }).transform((form, context) => {
-  const { title, system, position, summary, version } = form;
-  return {
-    version,
-    title,
-    system,
-    position,
-    summary,
-    vehicles: ticked(form, "vehicle-") as VehicleId[],
-    newVehicle: readNewVehicle(form, context),
-  };
-});
+export const LessonForm = z
+  .looseObject({ intent: z.literal("details"), ...details, version: draftVersion })
+  .transform((form, context) => {
+    const { title, system, position, summary, version } = form;
+    return {
+      version,
+      title,
+      system,
+      position,
+      summary,
+      vehicles: ticked(form, "vehicle-") as VehicleId[],
+      newVehicle: readNewVehicle(form, context),
+    };
+  });
 export type LessonDetails = Omit<z.output<typeof LessonForm>, "version">;
 
 const place = z.coerce.number().int().min(1).max(99);

@@ -1,6 +1,6 @@
 import { expect, test } from "vitest";
 import type { RecordingId } from "#drizzle/schema/ids";
-import { fileTime, lessonDuration, lessonTime } from "./lesson-time";
+import { fileTime, lessonDuration, lessonTime, nearestLessonTime } from "./lesson-time";
 
 const clips = [
   { recordingId: "A" as RecordingId, inMs: 10_000, outMs: 40_000, cuts: [{ fromMs: 20_000, toMs: 25_000 }] },
@@ -31,4 +31,11 @@ test("past the end is the end, before the start is the start", () => {
   expect(fileTime(clips, 99_000)).toEqual({ recordingId: "B", fileMs: 5_000 });
   expect(fileTime(clips, -5)).toEqual({ recordingId: "A", fileMs: 10_000 });
   expect(fileTime([], 0)).toBeNull();
+});
+
+test("a moment in a cut-out is shown as the next one that plays", () => {
+  expect(nearestLessonTime(clips, "A", 22_000)).toBe(10_000);
+  expect(nearestLessonTime(clips, "A", 5_000)).toBe(0);
+  expect(nearestLessonTime(clips, "A", 99_000)).toBe(25_000);
+  expect(nearestLessonTime(clips, "B", 1_000)).toBe(26_000);
 });

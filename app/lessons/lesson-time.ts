@@ -43,6 +43,21 @@ export function lessonTime(
   return atEnd ? atEnd.lessonStartMs + fileMs - atEnd.fromMs : null;
 }
 
+/** Lesson time of a moment, or of the next one that the lesson plays when this one is cut out; past the last: its end. */
+export function nearestLessonTime(
+  clips: readonly SnapshotClip[],
+  recordingId: string,
+  fileMs: number,
+): number {
+  const exact = lessonTime(clips, recordingId, fileMs);
+  if (exact !== null) return exact;
+  const own = piecesOf(clips).filter((piece) => piece.recordingId === recordingId);
+  const next = own.find((piece) => piece.fromMs > fileMs);
+  if (next) return next.lessonStartMs;
+  const last = own.at(-1);
+  return last ? last.lessonStartMs + last.toMs - last.fromMs : 0;
+}
+
 /** Where a moment of lesson time lies: the recording and the time in its file. Past the end: the end. */
 export function fileTime(
   clips: readonly SnapshotClip[],

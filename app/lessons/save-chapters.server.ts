@@ -5,7 +5,7 @@ import { chapters, marks } from "#drizzle/schema/index";
 import { chapterAt, editChapters, type ChapterEdit } from "./chapter-edits";
 import type { Draft, DraftChapter } from "./draft";
 import { missing, refused, stale, type DraftRefusal } from "./draft-refusal";
-import { fileTime, lessonDuration, lessonTime } from "./lesson-time";
+import { fileTime, lessonDuration, nearestLessonTime } from "./lesson-time";
 import { loadDraft } from "./load-draft.server";
 import { countChange, lockDraft } from "./lock-draft.server";
 import type { Phase } from "./mark";
@@ -109,7 +109,7 @@ export function saveChapters(
     const asked = asEdit(draft, request);
     if (!asked.ok) return asked;
     const edited = editChapters(draft.chapters, asked.edit, (recordingId, ms) =>
-      formatExactTimecode(lessonTime(draft.clips, recordingId, ms) ?? ms),
+      formatExactTimecode(nearestLessonTime(draft.clips, recordingId, ms)),
     );
     if (!edited.ok) return refused({ [edited.field]: edited.error });
     store(scope, draft, edited.chapters);

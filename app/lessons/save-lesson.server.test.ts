@@ -149,7 +149,10 @@ function edit(
   version: number,
   fields: Record<string, string>,
 ) {
-  const form = parseForm(LessonForm, aForm({ ...TITLED, version: String(version), ...fields }));
+  const form = parseForm(
+    LessonForm,
+    aForm({ intent: "details", ...TITLED, version: String(version), ...fields }),
+  );
   if (!form.ok) throw new Error(JSON.stringify(form.errors));
   return editLesson(scope, lessonId, form.value.version, form.value, NOON);
 }

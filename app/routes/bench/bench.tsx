@@ -1,0 +1,90 @@
+import { href, Link } from "react-router";
+import { requirePermission } from "~/auth/require.server";
+import { ButtonLink } from "~/components/ui/button";
+import { EmptyState, Page, Sheet } from "~/components/ui/page";
+import { scopeContext } from "~/context";
+import { stateWords } from "~/lessons/bench-state";
+import { listBench } from "~/lessons/list-bench.server";
+import type { Route } from "./+types/bench";
+
+export function meta() {
+  return [{ title: "Bench, Castlenut" }];
+}
+
+export function loader({ context }: Route.LoaderArgs) {
+  const scope = context.get(scopeContext);
+  requirePermission(scope, "lesson:edit");
+  return { lessons: listBench(scope) };
+}
+
+function count(n: number, one: string, many: string): string {
+  return `${n} ${n === 1 ? one : many}`;
+}
+
+function todo(lesson: Route.ComponentProps["loaderData"]["lessons"][number]): string {
+  const parts = [
+    lesson.inPencil > 0 ? count(lesson.inPencil, "mark in pencil", "marks in pencil") : "",
+    lesson.withoutSource > 0
+      ? count(lesson.withoutSource, "value without source", "values without source")
+      : "",
+    lesson.unchecked > 0 ? count(lesson.unchecked, "value unchecked", "values unchecked") : "",
+  ].filter((part) => part !== "");
+  return parts.length > 0 ? parts.join(" · ") : "Nothing open";
+}
+
+export default function Bench({ loaderData: { lessons } }: Route.ComponentProps) {
+  const upload = (
+    <ButtonLink look={lessons.length > 0 ? "primary" : "ghost"} to="/bench/recordings">
+      Upload a recording
+    </ButtonLink>
+  );
+  const create = (
+    <ButtonLink look="ghost" to={href("/bench/lessons/new")}>
+      New lesson
+    </ButtonLink>
+  );
+  return (
+    <Page
+      title="Bench"
+      under="Lessons in work and published."
+      actions={
+        <>
+          {upload}
+          {create}
+        </>
+      }
+    >
+      {lessons.length === 0 ? (
+        <EmptyState title="No lesson yet">
+          <p>Film a job, upload the recording, then make a lesson of it: chapters, values, sources.</p>
+          <ButtonLink to="/bench/recordings">Upload the first recording</ButtonLink>
+        </EmptyState>
+      ) : (
+        <Sheet>
+          <ul className="divide-y divide-line">
+            {lessons.map((lesson) => (
+              <li
+                key={lesson.id}
+                className="grid gap-1 px-4 py-3 lg:grid-cols-[minmax(0,5fr)_minmax(0,3fr)_minmax(0,4fr)] lg:items-baseline lg:gap-6"
+              >
+                <div className="min-w-0">
+                  <Link
+                    to={href("/bench/lessons/:lessonId", { lessonId: lesson.id })}
+                    className="inline-flex min-h-11 items-center font-figure text-2xl leading-tight font-semibold wrap-anywhere"
+                  >
+                    {lesson.title}
+                  </Link>
+                  <p className="text-sm text-ink-soft">
+                    {lesson.vehicles.length > 0 ? lesson.vehicles.join("; ") : "Any vehicle"}
+                  </p>
+                </div>
+                <p className="font-semibold">{stateWords(lesson.state)}</p>
+                <p className="text-sm text-ink-soft">{todo(lesson)}</p>
+              </li>
+            ))}
+          </ul>
+        </Sheet>
+      )}
+    </Page>
+  );
+}
