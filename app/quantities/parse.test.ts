@@ -56,6 +56,9 @@ test.each([
   ["1½ in", "1.5 in"],
   ["1 ½ in", "1.5 in"],
   ["13⁄16", "0.8125 in"],
+  ["5/8-in", "0.625 in"],
+  ["10-mm", "10 mm"],
+  ["65-ft-lb", "65 lbf·ft"],
   [".625", "0.625 in"],
   [".625 in", "0.625 in"],
   ["0,8 mm", "0.8 mm"],
@@ -288,6 +291,8 @@ test.each([
   ["80-95", "5 no-unit"],
   ["88 ±", "4 no-number"],
   ["torque it well", "7 no-number"],
+  ["turn 3/4", "8 no-unit"],
+  ["3/4 drive", "4 trailing"],
   ["wait a bit", "5 no-number"],
 ] as const)("reads the values of %j: %s", (text, expected) => {
   expect(rows(text)).toBe(expected);

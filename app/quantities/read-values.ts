@@ -209,7 +209,8 @@ class Reader {
       !scanned.fraction &&
       [undefined, "torque"].includes(this.r.options.dimension);
     if (degrees) return { unit: "deg", typed: false };
-    const bare = bareUnitOf(this.r, scanned);
+    // "turn 3/4" is no length.
+    const bare = further ? null : bareUnitOf(this.r, scanned);
     return bare ? { unit: bare, typed: false } : null;
   }
 

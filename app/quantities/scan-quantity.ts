@@ -192,7 +192,9 @@ export function scanQuantityAt(r: Reading, i: number): Scanned | Refusal | null 
     return typeof feet === "string" ? make(found.number, feet, behind + 1, found) : feet;
   }
 
-  const word = readUnitAt(s, found.end);
+  // "5/8-in" and "10-mm": a hyphen may hold number and unit together.
+  const hyphen = s[found.end] === "-" && /[A-Za-z]/.test(s[found.end + 1] ?? "");
+  const word = readUnitAt(s, hyphen ? found.end + 1 : found.end);
   if (!word) return make(found.number, null, found.end, found);
   // "22.0 mm min" and "22 min" of a length: there "min" is a limit, not minutes.
   if (word.meaning === "min" && r.options.dimension && !["time", "angle"].includes(r.options.dimension))

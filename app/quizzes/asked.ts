@@ -31,7 +31,8 @@ export type Asked = Readonly<{
 
 /** One number to be graded alone. `written` carries its unit and the places it was written with. */
 export type AskedNumber = Readonly<{
-  sense: "value" | "min" | "max" | "low" | "high";
+  /** "limit" is a wear limit that does not say on which side it lies; "low" and "high" are the ends of a range. */
+  sense: "value" | "min" | "max" | "limit" | "low" | "high";
   written: Quantity;
   /** The mark's own tolerance below and above, in the unit written; null when it gives none. */
   own: Readonly<{ below: number; above: number }> | null;
@@ -39,7 +40,7 @@ export type AskedNumber = Readonly<{
 
 /** One part of an answer: a number, or the two ends of a range. */
 export type AskedPart = Readonly<
-  { kind: "one"; one: AskedNumber } | { kind: "range"; low: AskedNumber; high: AskedNumber }
+  { kind: "one"; one: AskedNumber; backOff?: true } | { kind: "range"; low: AskedNumber; high: AskedNumber }
 >;
 
 /** A question made ready for grading. */
@@ -56,6 +57,11 @@ export type AskedValue = Readonly<{
 /** The dimension of the first number of a part. */
 export function partDimension(part: AskedPart): Dimension {
   return (part.kind === "one" ? part.one : part.low).written.dimension;
+}
+
+/** Whether a part is an angle that tightens, not one that backs off. */
+export function isTighteningAngle(part: AskedPart): boolean {
+  return partDimension(part) === "angle" && !(part.kind === "one" && part.backOff);
 }
 
 function plainQuantity(value: number, unit: Unit): Quantity {
@@ -104,12 +110,12 @@ function toleranceInText(rows: readonly ReadValue[], written: Quantity): AskedNu
 
 function shownNumber({ sense, written }: AskedNumber): string {
   const text = formatQuantity(written).text;
-  return sense === "min" || sense === "max" ? `${sense} ${text}` : text;
+  return sense === "min" || sense === "max" || sense === "limit" ? `${sense} ${text}` : text;
 }
 
 /** A part as it is shown in feedback: "88 N·m", "80–95 N·m", "min 22.0 mm". */
 export function shownPart(part: AskedPart): string {
-  if (part.kind === "one") return shownNumber(part.one);
+  if (part.kind === "one") return `${part.backOff ? "back off " : ""}${shownNumber(part.one)}`;
   const [low, high] = [formatQuantity(part.low.written), formatQuantity(part.high.written)];
   return low.figure.startsWith("−") || low.unit === "arcmin"
     ? `${low.text} to ${high.text}`
@@ -119,7 +125,7 @@ export function shownPart(part: AskedPart): string {
 function shownParts(parts: readonly AskedPart[]): string {
   let text = "";
   for (const [i, part] of parts.entries()) {
-    const joiner = i === 0 ? "" : partDimension(part) === "angle" ? " + " : ", ";
+    const joiner = i === 0 ? "" : isTighteningAngle(part) ? " + " : ", ";
     text += joiner + shownPart(part);
   }
   return text;
@@ -144,6 +150,9 @@ export function prepareAsked(
 
   const number = (sense: AskedNumber["sense"], value: number, own?: AskedNumber["own"]): AskedNumber => {
     const written = asWritten(value, unit, rows);
+    const role = rows.find((row) => row.quantity === written)?.role;
+    const limit = role === "min" || role === "max" || role === "limit";
+    if (sense === "value" && limit && !spansRange(rows)) return { sense: role, written, own: own ?? null };
     return { sense, written, own: own ?? (sense === "value" ? toleranceInText(rows, written) : null) };
   };
   const given =
@@ -162,7 +171,8 @@ export function prepareAsked(
       if (!stageUnit.ok || !Number.isFinite(stage.value))
         return { ok: false, error: "The question has a stage without a number or unit." };
       const written = asWritten(stage.value, stageUnit.unit, rows);
-      const own = sameKind(stageUnit.unit, unit) ? (given ?? toleranceInText(rows, written)) : null;
+      const inText = toleranceInText(rows, written);
+      const own = sameKind(stageUnit.unit, unit) ? (given ?? inText) : inText;
       parts.push({ kind: "one", one: { sense: "value", written, own } });
     }
   } else if (value !== undefined) {
@@ -175,11 +185,10 @@ export function prepareAsked(
   else if (max !== undefined) parts.push({ kind: "one", one: number("max", max, given) });
   else parts.push(...partsOfText(rows, given));
   if (parts.length === 0) return { ok: false, error: "The question has no value." };
-  if (asked.angleDeg !== undefined && !(value === undefined && partsHaveAngle(parts)))
-    parts.push({
-      kind: "one",
-      one: { sense: "value", written: asWritten(asked.angleDeg, "deg", rows), own: null },
-    });
+  if (asked.angleDeg !== undefined && !(value === undefined && partsHaveAngle(parts))) {
+    const written = asWritten(asked.angleDeg, "deg", rows);
+    parts.push({ kind: "one", one: { sense: "value", written, own: toleranceInText(rows, written) } });
+  }
 
   const plain = (v: GivenValue): AskedNumber | null => {
     const u = readUnit(v.unit, { country: country ?? "US" });
@@ -205,8 +214,12 @@ export function prepareAsked(
   };
 }
 
+function spansRange(rows: readonly ReadValue[]): boolean {
+  return rows.some((row, i) => row.role === "min" && rows[i + 1]?.role === "max");
+}
+
 function partsHaveAngle(parts: readonly AskedPart[]): boolean {
-  return parts.some((part) => partDimension(part) === "angle");
+  return parts.some(isTighteningAngle);
 }
 
 function partsOfText(rows: readonly ReadValue[], given: AskedNumber["own"] | undefined): AskedPart[] {
@@ -227,9 +240,11 @@ function partsOfText(rows: readonly ReadValue[], given: AskedNumber["own"] | und
       });
       continue;
     }
-    const sense = role === "min" || role === "max" ? role : "value";
-    const own = quantity.dimension === "angle" ? null : (given ?? toleranceInText(rows, quantity));
-    parts.push({ kind: "one", one: { sense, written: quantity, own } });
+    const sense = role === "min" || role === "max" || role === "limit" ? role : "value";
+    const inText = toleranceInText(rows, quantity);
+    const own = quantity.dimension === "angle" ? inText : (given ?? inText);
+    const one: AskedNumber = { sense, written: quantity, own };
+    parts.push(action === "back-off" ? { kind: "one", one, backOff: true } : { kind: "one", one });
   }
   return parts;
 }

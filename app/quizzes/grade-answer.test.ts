@@ -41,6 +41,8 @@ const STAGES: Asked = {
   ],
 };
 const TURN: Asked = { text: "hand tight + 3/4 turn", kind: "torque", value: 0.75, unit: "turn" };
+const BACK_OFF: Asked = { text: "40 Nm, back off 180°, 20 Nm + 60°", kind: "torque", unit: "N·m" };
+const LIMIT_AS_VALUE: Asked = { text: "min 22.0 mm", kind: "measure", value: 22, unit: "mm" };
 const SOCKET: Asked = {
   text: "19 mm",
   kind: "tool",
@@ -53,6 +55,8 @@ const INCH_SOCKET: Asked = { text: "3/4", kind: "tool", value: 0.75, unit: "in" 
 const SMALL_HEX: Asked = { text: "5/16", kind: "tool", value: 0.3125, unit: "in" };
 const SPANNER: Asked = { text: "1-5/16", kind: "tool", value: 1.3125, unit: "in" };
 const ROTOR: Asked = { text: "min 22.0 mm", kind: "measure", min: 22, unit: "mm" };
+const LIMIT: Asked = { text: "wear limit 1.5 mm", kind: "measure", unit: "mm" };
+const CLOSE_ANGLE: Asked = { text: "30 Nm + 90° ± 2°", kind: "torque", value: 30, unit: "N·m", angleDeg: 90 };
 const RUNOUT: Asked = { text: "max 0.05 mm", kind: "measure", max: 0.05, unit: "mm" };
 const GAP: Asked = { text: "0.035 in", kind: "measure", value: 0.035, unit: "in" };
 const BAR: Asked = { text: "24.0 mm", kind: "measure", value: 24, unit: "mm" };
@@ -238,6 +242,11 @@ const TABLE: readonly (readonly [Asked, string, Outcome, number?])[] = [
   [ROTOR, "2.20 cm", "right-other-unit"],
   [ROTOR, "22 in", "wrong-unit", 25.4],
   [ROTOR, "22", "no-unit"],
+  [LIMIT, "1.5 mm", "right"],
+  [LIMIT, "1.4 mm", "other"],
+  [LIMIT, "1.53 mm", "other"],
+  [LIMIT, "0.0591 in", "right-other-unit"],
+  [LIMIT, "0.06 in", "other"],
   [RUNOUT, "0.05 mm", "right"],
   [RUNOUT, "0.06 mm", "other"],
   [RUNOUT, "0.0019 in", "right-other-unit"],
@@ -268,6 +277,8 @@ const TABLE: readonly (readonly [Asked, string, Outcome, number?])[] = [
   [ANGLE, "30", "no-unit"],
   [{ ...ANGLE, superseded: [{ value: 35, unit: "N·m" }] }, "35 Nm", "superseded"],
   [{ ...ANGLE, superseded: [{ value: 35, unit: "N·m" }] }, "35 Nm + 90°", "superseded"],
+  [CLOSE_ANGLE, "30 Nm + 92°", "within-tolerance"],
+  [CLOSE_ANGLE, "30 Nm + 93°", "other"],
   [STAGES, "20 Nm, 40 Nm, +90°", "right"],
   [STAGES, "20 Nm then 40 Nm + 90", "right"],
   [STAGES, "15 ft-lb, 30 ft-lb + 90°", "right-other-unit"],
@@ -283,6 +294,14 @@ const TABLE: readonly (readonly [Asked, string, Outcome, number?])[] = [
   [TURN, "270°", "right-other-unit"],
   [TURN, "1/2 turn", "other"],
   [TURN, "270", "no-unit"],
+  [BACK_OFF, "40 Nm, back off 180°, 20 Nm + 60°", "right"],
+  [BACK_OFF, "40 Nm, back off 1/2 turn, 20 Nm + 60", "right-other-unit"],
+  [BACK_OFF, "40 Nm, back off 180°, 20 Nm", "missing-angle"],
+  [BACK_OFF, "40 Nm, 20 Nm + 60°", "other"],
+  [BACK_OFF, "40 Nm + 180°, 20 Nm + 60°", "other"],
+  [BACK_OFF, "40 Nm, back off 90°, 20 Nm + 60°", "other"],
+  [TURN, "back off 3/4 turn", "other"],
+  [LIMIT_AS_VALUE, "21.96 mm", "other"],
   // tool sizes
   [SOCKET, "19 mm", "right"],
   [SOCKET, "19", "right"],

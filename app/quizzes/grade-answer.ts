@@ -4,6 +4,7 @@ import { readTyped, type ReadValue } from "~/quantities/read-values";
 import { canonicalUnit, type Dimension } from "~/quantities/units";
 import { unitQuestion, wrongDimension } from "~/quantities/unit-spellings";
 import {
+  isTighteningAngle,
   partDimension,
   prepareAsked,
   shownPart,
@@ -218,7 +219,8 @@ function gradeSingle(asked: AskedValue, typed: readonly TypedPart[], shop: QuizT
   const [first, second] = typed as [TypedPart, ...TypedPart[]];
   if (second) return severalTyped(asked, typed);
   const [row] = first.rows as [ReadValue, ...ReadValue[]];
-  if (first.backOff) return { outcome: "other", text: `That loosens it. The value is ${asked.shown}.` };
+  if (first.backOff && !(part.kind === "one" && part.backOff))
+    return { outcome: "other", text: `That loosens it. The value is ${asked.shown}.` };
   if (part.kind === "one" && first.range)
     return { outcome: "other", text: `One value is asked for here, not a range: ${asked.shown}.` };
   if (part.kind === "one" && (part.one.sense === "min" || part.one.sense === "max")) {
@@ -253,29 +255,31 @@ function isAngle(dimension: Dimension): boolean {
 }
 
 function gradeStages(asked: AskedValue, typed: readonly TypedPart[], shop: QuizTolerance): Grade {
-  const askedAngles = asked.parts.filter((part) => isAngle(partDimension(part))).length;
-  const typedAngles = typed.filter((part) => isAngle(part.dimension)).length;
-  const sameTorques = asked.parts.length - askedAngles === typed.length - typedAngles;
+  const askedAngles = asked.parts.filter(isTighteningAngle).length;
+  const typedAngles = typed.filter((part) => isAngle(part.dimension) && !part.backOff).length;
+  const sameSteps = asked.parts.length - askedAngles === typed.length - typedAngles;
   const wrongCount: Grade = {
     outcome: "other",
     text: `This takes ${asked.parts.length} steps: ${asked.shown}.`,
   };
-  const backsOff = typed.some((part) => part.backOff);
-  if (!sameTorques || typedAngles > askedAngles || backsOff) return wrongCount;
+  if (!sameSteps || typedAngles > askedAngles) return wrongCount;
 
   const results: PartGrade[] = [];
   let next = 0;
   let missing = 0;
   for (const part of asked.parts) {
     const given = typed[next];
-    if (given && isAngle(given.dimension) === isAngle(partDimension(part))) {
+    const backsOff = part.kind === "one" && part.backOff === true;
+    const fits =
+      given && isAngle(given.dimension) === isAngle(partDimension(part)) && given.backOff === backsOff;
+    if (given && fits) {
       if (part.kind === "one" && given.range)
         return { outcome: "other", text: `A range was typed for one value: ${asked.shown}.` };
       const result = gradePart(part, given, asked, shop);
       if (!result) return wrongCount;
       results.push(result);
       next++;
-    } else if (isAngle(partDimension(part))) missing++;
+    } else if (isTighteningAngle(part)) missing++;
     else return wrongCount;
   }
   if (next < typed.length) return wrongCount;

@@ -72,7 +72,7 @@ const MIXED_UP: Partial<Record<Dimension, readonly Unit[]>> = {
 
 type Band = Readonly<{ below: number; above: number }>;
 
-const noLimit = (sense: AskedNumber["sense"]): boolean => sense !== "min" && sense !== "max";
+const noLimit = (sense: AskedNumber["sense"]): boolean => !["min", "max", "limit"].includes(sense);
 
 /** The tolerance around an asked number, in the unit written. */
 function bandOf(number: AskedNumber, shop: QuizTolerance, tightening: boolean): Band {
@@ -80,6 +80,7 @@ function bandOf(number: AskedNumber, shop: QuizTolerance, tightening: boolean): 
   const limit = !noLimit(sense);
   if (limit && written.dimension === "length") return { below: 0, above: 0 };
   const band = own ?? defaultBand(number, shop, tightening);
+  if (sense === "limit") return { below: 0, above: 0 };
   if (sense === "min") return { below: 0, above: band.above };
   if (sense === "max") return { below: band.below, above: 0 };
   return band;
@@ -149,6 +150,9 @@ function isRight(number: AskedNumber, typed: Quantity, shop: QuizTolerance, tigh
     const rounding = converted && Math.abs(off) <= SAME * Math.abs(written.value) + slack;
     return half && (rounding || within(band, off, slack));
   }
+  // A limit whose side is not written may be rounded only where it makes no difference.
+  if (sense === "limit")
+    return half && typed.unit !== written.unit && step <= 0.1 * writtenStep(number) + slack;
   const keepsLimit = sense === "min" ? off >= -slack : off <= slack;
   if (!keepsLimit) return false;
   // A limit in another unit is rounded away from danger, which can be a whole place: min 22.0 mm is 0.867 in.
