@@ -189,6 +189,8 @@ test.each([
   ["65 lbf·ft today", {}, "10 trailing: 65 lbf·ft was read, but not “today”. Type one value alone."],
   ["", {}, "0 empty: Nothing typed. Type a number and its unit, like 88 N·m."],
   ["   ", {}, "0 empty: Nothing typed. Type a number and its unit, like 88 N·m."],
+  ["80-95 Nm", {}, "2 trailing: “80-95 Nm” is a limit, a range or several values. Type one value alone."],
+  ["max 9 Nm", {}, "0 trailing: “max 9 Nm” is a limit, a range or several values. Type one value alone."],
   ["snug", {}, "0 no-number: There is no number here. Type a number and its unit, like 88 N·m."],
   ["NaN Nm", {}, "0 no-number: There is no number here. Type a number and its unit, like 88 N·m."],
   [

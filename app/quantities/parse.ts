@@ -1,6 +1,7 @@
 import { normalText, LONGEST } from "./normal-text";
 import type { Quantity } from "./quantity";
 import { anyPhraseAt } from "./read-phrase";
+import { readValues } from "./read-values";
 import { refuse, type Refusal } from "./refusal";
 import {
   bareUnitOf,
@@ -44,6 +45,20 @@ export function readQuantity(
 ): { ok: true; quantity: Quantity } | Refusal {
   const r = startReading(text, options);
   if ("ok" in r) return r;
+  const read = readOne(r);
+  if (read.ok || (read.reason !== "no-number" && read.reason !== "no-unit" && read.reason !== "trailing"))
+    return read;
+  const several = readValues(text, options);
+  if (!several.ok || several.values.every(({ quantity }) => quantity === null)) return read;
+  return refuse(
+    "trailing",
+    read.at,
+    `“${text.trim().slice(0, 40)}” is a limit, a range or several values. Type one value alone.`,
+  );
+}
+
+function readOne(r: Reading): { ok: true; quantity: Quantity } | Refusal {
+  const text = r.source;
   let start = skip(r.s, 0);
   const filler = anyPhraseAt(r.s, start, [
     "approximately",

@@ -63,6 +63,11 @@ export function wrongUnitText(
   return `Right number, wrong unit. ${shown}${is === "" ? " is" : is} ${times}.${consequence(dimension, grade.tooMuch, grade.factor)}${right}`;
 }
 
+/** "The value is 88 N·m", "The limit is min 22.0 mm". */
+function named(whole: string): string {
+  return `The ${/^(?:min|max|limit) /.test(whole) ? "limit" : "value"} is ${whole}`;
+}
+
 /** What is said of one number that is right, close, or wrong; `whole` is the answer as it should be. */
 export function numberText(
   part: AskedPart,
@@ -75,15 +80,15 @@ export function numberText(
   const whole = asked.shown;
   switch (grade.outcome) {
     case "right":
-      return shown === whole ? `Right. ${whole}.` : `Right. The value is ${whole}.`;
+      return shown === whole ? `Right. ${whole}.` : `Right. ${named(whole)}.`;
     case "right-other-unit":
       if (grade.standIn)
         return `${grade.standIn.hex} is the size. A ${grade.standIn.tool} tool stands in on it, this way only: six-point, and never on a rounded, seized or safety-critical fastener.`;
       return asked.parts.length === 1 && part.kind === "one" && number.sense === "value"
         ? `Right. ${shown} is ${whole}.`
-        : `Right in another unit. The value is ${whole}.`;
+        : `Right in another unit. ${named(whole)}.`;
     case "within-tolerance":
-      return `Close enough to count. The value is ${whole}.`;
+      return `Close enough to count. ${named(whole)}.`;
     case "wrong-unit":
       return wrongUnitText(number, typed, grade);
     case "superseded":
@@ -100,7 +105,7 @@ export function numberText(
 function otherText(part: AskedPart, number: AskedNumber, typed: Quantity, whole: string): string {
   const { written, sense } = number;
   const shown = formatQuantity(typed).text;
-  if (typed.dimension !== written.dimension) return `Not that one. The value is ${whole}.`;
+  if (typed.dimension !== written.dimension) return `Not that one. ${named(whole)}.`;
   const off = convertNumber(typed.value, typed.unit, written.unit) - written.value;
   if (written.dimension === "length" && sense === "min" && off < 0)
     return `${shown} would let a worn part pass. Reject it below ${formatQuantity(written).text}.`;
@@ -108,5 +113,5 @@ function otherText(part: AskedPart, number: AskedNumber, typed: Quantity, whole:
     return `${shown} would let a worn part pass. Reject it above ${formatQuantity(written).text}.`;
   if (sense === "max" && off > 0) return `${shown} is over the maximum. It is ${shownPart(part)}.`;
   if (sense === "min" && off < 0) return `${shown} is under the minimum. It is ${shownPart(part)}.`;
-  return `Not that one. The value is ${whole}.`;
+  return `Not that one. ${named(whole)}.`;
 }
