@@ -13,7 +13,9 @@ export default [
   layout("routes/shell.tsx", [
     // Everybody: find, watch.
     index("routes/library/library.tsx"),
+    route("search", "routes/library/search.tsx"),
     route("lessons/:lessonId", "routes/library/lesson.tsx"),
+    route("lessons/:lessonId/values/:markId/wrong", "routes/library/looks-wrong.tsx"),
 
     // Each person: what to learn, what is learned.
     route("training", "routes/training/my-training.tsx"),
@@ -39,6 +41,11 @@ export default [
     route("bench/lessons/:lessonId/questions", "routes/bench/questions.tsx"),
     route("bench/lessons/:lessonId/captions", "routes/bench/captions.tsx"),
     route("bench/lessons/:lessonId/captions/:trackId/original", "routes/bench/caption-original.ts"),
+    route("bench/lessons/:lessonId/check", "routes/bench/check.tsx"),
+    route("bench/lessons/:lessonId/publish", "routes/bench/publish.tsx"),
+    route("bench/lessons/:lessonId/revisions/:n", "routes/bench/revision.tsx"),
+    route("bench/doubts", "routes/bench/doubts.tsx"),
+    route("bench/doubts/:doubtId", "routes/bench/doubt.tsx"),
 
     // Owners: people, shop.
     route("account", "routes/team/account.tsx"),
@@ -50,6 +57,7 @@ export default [
       route("lessons/:lessonId/captions/:trackId.vtt", "routes/api/caption-track.ts"),
       route("lessons/:lessonId/chapters.vtt", "routes/api/chapters.ts"),
       route("units", "routes/api/units.ts"),
+      route("search", "routes/api/search.ts"),
       route("watched", "routes/api/watched.ts"),
     ]),
   ]),

@@ -1,0 +1,75 @@
+import { valuesText } from "~/lessons/values-text";
+import type { FoundValue, SearchResult } from "./search-shop.server";
+
+/** One answer as other programs read it: figures as typed, `si` canonical (N·m, m, Pa, m³, degree, K), `atMs` in lesson time. */
+export type FoundJson = Readonly<{
+  answers: readonly Readonly<{
+    markId: string;
+    lessonId: string;
+    lessonTitle: string;
+    chapterTitle: string;
+    kind: string;
+    component: string;
+    text: string;
+    value: number | null;
+    unit: string | null;
+    si: number | null;
+    atMs: number;
+    state: string;
+  }>[];
+  moments: readonly Readonly<{
+    lessonId: string;
+    lessonTitle: string;
+    chapterTitle: string;
+    atMs: number;
+    snippet: string;
+  }>[];
+  lessons: readonly Readonly<{ lessonId: string; lessonTitle: string }>[];
+}>;
+
+function answerJson({
+  lessonId,
+  lessonTitle,
+  chapterTitle,
+  found: { mark },
+  atMs,
+}: FoundValue): FoundJson["answers"][number] {
+  const lead = mark.values.find((row) => row.value !== null);
+  const text =
+    mark.values.length > 0
+      ? valuesText(mark.values)
+      : mark.kind === "part"
+        ? mark.partNumber
+        : mark.kind === "supply"
+          ? mark.product
+          : mark.words;
+  return {
+    markId: mark.id,
+    lessonId,
+    lessonTitle,
+    chapterTitle,
+    kind: mark.kind,
+    component: mark.component || mark.toolName,
+    text,
+    value: lead?.value ?? null,
+    unit: lead?.unit ?? null,
+    si: lead?.number ?? null,
+    atMs,
+    state: mark.state,
+  };
+}
+
+/** A search result for other programs. Waiting values carry no figure; they are left out of the answers. */
+export function foundJson(result: Pick<SearchResult, "answers" | "moments" | "lessons">): FoundJson {
+  return {
+    answers: result.answers.filter(({ found }) => found.showing !== "withheld").map(answerJson),
+    moments: result.moments.map(({ lessonId, lessonTitle, chapterTitle, atMs, words }) => ({
+      lessonId,
+      lessonTitle,
+      chapterTitle,
+      atMs,
+      snippet: words,
+    })),
+    lessons: result.lessons.map(({ lessonId, lessonTitle }) => ({ lessonId, lessonTitle })),
+  };
+}
