@@ -80,10 +80,15 @@ const place = z.coerce.number().int().min(1).max(99);
 /** A new lesson: its details, the recordings in order, and the name of the first chapter. */
 export const NewLessonForm = z
   .looseObject({ ...details, lessonId: formId, chapterTitle: line(120) })
+  // Said together with what else is missing, not one form later.
+  .refine((form) => ticked(form, "recording-").length > 0, {
+    path: ["recordings"],
+    message: "Choose at least one recording.",
+    when: () => true,
+  })
   .transform((form, context) => {
     const { title, system, position, summary, lessonId, chapterTitle } = form;
     const recordings = ticked(form, "recording-");
-    if (recordings.length === 0) wrong(context, "recordings", "Choose at least one recording.");
     const placeOf = (id: string, n: number) => {
       const given = place.safeParse(form[`place-${id}`]);
       return given.success ? given.data : n + 1;

@@ -7,6 +7,7 @@ import type { LessonId, MarkId, UserId } from "#drizzle/schema/ids";
 import { auditLog, checks, marks } from "#drizzle/schema/index";
 import type { Draft } from "~/lessons/draft";
 import { fingerprintOf } from "~/lessons/fingerprint";
+import { nearestLessonTime } from "~/lessons/lesson-time";
 import { loadDraft } from "~/lessons/load-draft.server";
 import { holdsFigure, type Mark } from "~/lessons/mark";
 import { markTitle } from "~/lessons/mark-words";
@@ -14,7 +15,7 @@ import { disputedMessage, sendForCheckMessage } from "~/mail/check-message";
 import { queueMail } from "~/mail/queue-mail.server";
 import { shopToday } from "~/training/assign-lesson.server";
 import { restsOnSource } from "./gate";
-import { teamMember, whoMay } from "./who-may.server";
+import { teamMember, whoMay, type ShopPerson } from "./who-may.server";
 
 /**
  * Whether this person may check a mark:
@@ -55,34 +56,41 @@ function authorsOf(scope: Scope, ids: readonly MarkId[]): Map<MarkId, UserId | n
 }
 
 function mayCheck(scope: Scope, mark: Mark, author: UserId | null | undefined, alone: boolean): MayCheck {
+  if (author === scope.userId && !alone) return "own";
   if (restsOnSource(mark) && mark.source === null) return "no-source";
-  if (author !== scope.userId) return "yes";
-  return alone ? "own-alone" : "own";
+  return author === scope.userId ? "own-alone" : "yes";
 }
 
-function isAlone(scope: Scope): boolean {
-  return whoMay(scope, "mark:check").every((person) => person.id === scope.userId);
+/** Who else may check. */
+function others(scope: Scope): ShopPerson[] {
+  return whoMay(scope, "mark:check").filter((person) => person.id !== scope.userId);
 }
 
-/** A lesson's marks for the check page, in order of the lesson; undefined: no such lesson in this shop. */
-export function marksForCheck(
-  scope: Scope,
-  lessonId: LessonId,
-): Readonly<{ draft: Draft; rows: readonly ForCheck[]; alone: boolean }> | undefined {
+export type CheckPage = Readonly<{
+  draft: Draft;
+  /** In the order of the lesson. */
+  rows: readonly ForCheck[];
+  /** Who else may check, by name. */
+  others: readonly string[];
+}>;
+
+/** A lesson's marks for the check page; undefined: no such lesson in this shop. */
+export function marksForCheck(scope: Scope, lessonId: LessonId): CheckPage | undefined {
   const draft = loadDraft(scope, lessonId);
   if (!draft) return undefined;
-  const own = draft.marks.filter(isForCheck);
+  const at = (mark: Mark) => lessonTime(draft.clips, mark.recordingId, mark.atMs) ?? Number.MAX_SAFE_INTEGER;
+  const own = draft.marks.filter(isForCheck).sort((a, b) => at(a) - at(b));
   const authors = authorsOf(
     scope,
     own.map((mark) => mark.id),
   );
-  const alone = isAlone(scope);
+  const names = others(scope).map((person) => person.name);
   return {
     draft,
-    alone,
+    others: names,
     rows: own.map((mark) => ({
       mark,
-      may: mayCheck(scope, mark, authors.get(mark.id), alone),
+      may: mayCheck(scope, mark, authors.get(mark.id), names.length === 0),
       seal: sealOf(mark),
     })),
   };
@@ -121,7 +129,7 @@ export function checkMark(
         "This value was changed after you opened the page. Read it again as it is now, then check it.",
       );
     const author = authorsOf(scope, [markId]).get(markId);
-    const may = mayCheck(scope, mark, author, isAlone(scope));
+    const may = mayCheck(scope, mark, author, others(scope).length === 0);
     if (may === "own") return refused("You wrote this value. Somebody else has to check it.");
     if (may === "no-source" && word.outcome === "confirmed")
       return refused(
@@ -216,7 +224,7 @@ export function sendForCheck(
     const waiting = found.rows.filter((row) => row.mark.state !== "checked").length;
     if (waiting === 0)
       return { ok: false, reason: "refused", sentence: "Every value is checked. There is nothing to send." };
-    const people = whoMay(scope, "mark:check").filter((person) => person.id !== scope.userId);
+    const people = others(scope);
     if (people.length === 0)
       return {
         ok: false,

@@ -16,6 +16,7 @@ import {
   watchedStretches,
 } from "#drizzle/schema/index";
 import { findLearnerLesson, type LearnerLesson, type LearnerMark } from "~/lessons/learner-lesson.server";
+import { nearestLessonTime } from "~/lessons/lesson-time";
 import { markTitle } from "~/lessons/mark-words";
 import { doubtMessage } from "~/mail/doubt-message";
 import { queueMail } from "~/mail/queue-mail.server";
@@ -33,6 +34,42 @@ export function findValue(
   const lesson = findLearnerLesson(scope, lessonId);
   const value = lesson?.marks.find(({ mark }) => mark.id === markId);
   return lesson && value ? { lesson, value } : undefined;
+}
+
+/** What the page behind "This looks wrong" shows; undefined: the value is not in the newest revision. */
+export function lookAtValue(scope: Scope, lessonId: LessonId, markId: MarkId) {
+  const found = findValue(scope, lessonId, markId);
+  if (!found) return undefined;
+  const { snapshot } = found.lesson;
+  return {
+    title: snapshot.title,
+    value: found.value,
+    lessonMs: nearestLessonTime(snapshot.clips, found.value.mark.recordingId, found.value.mark.atMs),
+    /** Already said by this person and still open. */
+    said: openDoubtOf(scope, markId),
+    /** Who is told. */
+    told: whoMay(scope, "value:stop")
+      .filter((person) => person.id !== scope.userId)
+      .map((person) => person.name),
+  };
+}
+
+/** The open doubt of this person on a value, in the strength that the role gives. */
+function openDoubtOf(scope: Scope, markId: MarkId): DoubtId | null {
+  const open = scope.db
+    .select({ id: doubts.id })
+    .from(doubts)
+    .where(
+      and(
+        eq(doubts.shopId, scope.shopId),
+        eq(doubts.markId, markId),
+        eq(doubts.raisedBy, scope.userId),
+        eq(doubts.stops, can(scope.role, "value:stop")),
+        isNull(doubts.clearedAt),
+      ),
+    )
+    .get();
+  return open?.id ?? null;
 }
 
 export type Raised =
@@ -54,20 +91,8 @@ export function raiseDoubt(
     const found = findValue(scope, lessonId, markId);
     if (!found) return { ok: false, reason: "missing" };
     const stops = can(scope.role, "value:stop");
-    const open = scope.db
-      .select({ id: doubts.id })
-      .from(doubts)
-      .where(
-        and(
-          eq(doubts.shopId, scope.shopId),
-          eq(doubts.markId, markId),
-          eq(doubts.raisedBy, scope.userId),
-          eq(doubts.stops, stops),
-          isNull(doubts.clearedAt),
-        ),
-      )
-      .get();
-    if (open) return { ok: true, doubtId: open.id, stops };
+    const open = openDoubtOf(scope, markId);
+    if (open) return { ok: true, doubtId: open, stops };
     const { id: doubtId } = scope.db
       .insert(doubts)
       .values({ shopId: scope.shopId, lessonId, markId, raisedBy: scope.userId, stops, reason, at: now })

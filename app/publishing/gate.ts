@@ -1,7 +1,7 @@
 import type { ChapterId, LessonId, MarkId, RecordingId } from "#drizzle/schema/ids";
 import { isBushedJoint } from "~/lessons/component-key";
 import type { Draft, DraftChapter } from "~/lessons/draft";
-import { lessonTime } from "~/lessons/lesson-time";
+import { nearestLessonTime } from "~/lessons/lesson-time";
 import { holdsFigure, needsSource, type Mark } from "~/lessons/mark";
 import { markTitle } from "~/lessons/mark-words";
 import { formatTimecode } from "~/lessons/timecode";
@@ -99,7 +99,7 @@ function ofChapters(draft: Draft): GateLine[] {
 
 function namesOf(draft: Draft): (mark: Mark) => string {
   return (mark) => {
-    const at = lessonTime(draft.clips, mark.recordingId, mark.atMs) ?? mark.atMs;
+    const at = nearestLessonTime(draft.clips, mark.recordingId, mark.atMs);
     return `“${markTitle(mark)}” at ${formatTimecode(at)}`;
   };
 }

@@ -2,12 +2,13 @@ import { and, eq, isNull } from "drizzle-orm";
 import type { Database } from "~/db.server";
 import { currentTracks, type CaptionTrack } from "~/captions/load-tracks.server";
 import type { LessonId, MarkId, ShopId } from "#drizzle/schema/ids";
-import { doubts, revisions } from "#drizzle/schema/index";
+import { doubts } from "#drizzle/schema/index";
 import { compareSnapshots, type Comparable, type Comparison } from "~/lessons/compare-snapshots";
 import type { Draft } from "~/lessons/draft";
 import { loadDraft } from "~/lessons/load-draft.server";
 import { readSnapshot, type Snapshot } from "~/lessons/snapshot";
 import { gate, type GateLine } from "./gate";
+import { findRevision } from "./load-revision.server";
 
 type InShop = Readonly<{ db: Database; shopId: ShopId }>;
 
@@ -18,15 +19,6 @@ export type BeforePublishing = Readonly<{
   /** The newest revision and what the draft changes in it; null while never published. */
   former: Readonly<{ n: number; snapshot: Snapshot; comparison: Comparison }> | null;
 }>;
-
-/** The revision n of a lesson as stored; undefined when there is none. */
-export function findRevision(scope: InShop, lessonId: LessonId, n: number) {
-  return scope.db
-    .select()
-    .from(revisions)
-    .where(and(eq(revisions.shopId, scope.shopId), eq(revisions.lessonId, lessonId), eq(revisions.n, n)))
-    .get();
-}
 
 function stoppedMarks(scope: InShop, lessonId: LessonId): MarkId[] {
   return scope.db

@@ -12,7 +12,8 @@ import { piecesOf } from "~/lessons/lesson-time";
 import { SNAPSHOT_FORMAT, type Snapshot } from "~/lessons/snapshot";
 import { writeQuestions } from "~/quizzes/write-questions.server";
 import { isOpen, type GateLine } from "./gate";
-import { beforePublishing, findRevision, namedTracks } from "./load-gate.server";
+import { beforePublishing, namedTracks } from "./load-gate.server";
+import { findRevision } from "./load-revision.server";
 
 export type Published =
   /** `already`: the draft says nothing new, so the newest revision stands (the same form posted twice). */

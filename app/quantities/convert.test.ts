@@ -178,12 +178,13 @@ test("every unit names the source of its factor, and every dimension has a canon
   }
 });
 
+function read(text: string) {
+  const result = readQuantity(text);
+  if (!result.ok) throw new Error(result.error);
+  return result.quantity;
+}
+
 test("the same amount in other words is the same quantity", () => {
-  const read = (text: string) => {
-    const result = readQuantity(text);
-    if (!result.ok) throw new Error(result.error);
-    return result.quantity;
-  };
   expect(sameQuantity(read("780 in-lb"), read("65 ft-lb"))).toBe(true);
   expect(sameQuantity(read("0.5 in"), read("12.7 mm"))).toBe(true);
   expect(sameQuantity(read("88 Nm"), read("65 ft-lb"))).toBe(false);

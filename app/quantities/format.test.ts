@@ -117,13 +117,14 @@ test("a plate always shows the unit typed, and the preferred system first", () =
   expect(pairUnits(read("3/4 turn"), "inch")).toEqual(["deg", "turn"]);
 });
 
+function sizes(text: string) {
+  const values = readValues(text, { role: "size" });
+  if (!values.ok) throw new Error(values.error);
+  const shown = formatValues(values.values, "inch");
+  return [seen(shown.first), shown.second === null ? null : seen(shown.second)];
+}
+
 test("a tool's size stays as it is marked on the tool", () => {
-  const sizes = (text: string) => {
-    const values = readValues(text, { role: "size" });
-    if (!values.ok) throw new Error(values.error);
-    const shown = formatValues(values.values, "inch");
-    return [seen(shown.first), shown.second === null ? null : seen(shown.second)];
-  };
   expect(sizes("19 mm")).toEqual(["19_mm", null]);
   expect(sizes("13/16")).toEqual(["13/16_in", "20.64_mm"]);
 });

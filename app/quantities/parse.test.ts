@@ -135,12 +135,13 @@ test.each([
   expect(summary(text)).toBe(expected);
 });
 
+function read(text: string) {
+  const result = readQuantity(text);
+  if (!result.ok) throw new Error(result.error);
+  return result.quantity;
+}
+
 test("keeps the text, the places and the significant digits typed", () => {
-  const read = (text: string) => {
-    const result = readQuantity(text);
-    if (!result.ok) throw new Error(result.error);
-    return result.quantity;
-  };
   expect(read("  24.0 mm ")).toMatchObject({
     text: "24.0 mm",
     places: 1,

@@ -66,9 +66,11 @@ function holdsQuantity(mark: Mark, quantity: Quantity): boolean {
     (row) =>
       row.number !== null &&
       row.unit !== null &&
-      sameKind(row.unit, quantity.unit) &&
-      Math.abs(row.number - quantity.si) <=
-        Math.abs(quantity.si) * (row.dimension === "length" ? 1e-4 : 0.01),
+      ((sameKind(row.unit, quantity.unit) &&
+        Math.abs(row.number - quantity.si) <=
+          Math.abs(quantity.si) * (row.dimension === "length" ? 1e-4 : 0.01)) ||
+        // "88 degrees" may be said of a thermostat.
+        (quantity.unit === "deg" && row.dimension === "temperature" && row.value === quantity.value)),
   );
 }
 

@@ -73,7 +73,7 @@ export function Lanes({ draft }: { draft: Draft }) {
         <p className="text-sm text-on-graphite-soft">
           Marks <span className="ml-2">dashed: in pencil, solid: in ink</span>
         </p>
-        <ol className="relative" style={{ height: `${rows * 2.25}rem` }}>
+        <ol className="relative" style={{ height: `${rows * 2.9}rem` }}>
           {placed.map(({ mark, from, row }) => {
             const ms = nearestLessonTime(clips, mark.recordingId, mark.atMs);
             const words = valuesText(mark.values) || markTitle(mark);
@@ -81,15 +81,15 @@ export function Lanes({ draft }: { draft: Draft }) {
               <li
                 key={mark.id}
                 className="absolute w-[9.2%]"
-                style={{ left: `${from}%`, top: `${Math.min(row, MOST_ROWS - 1) * 2.25}rem` }}
+                style={{ left: `${from}%`, top: `${Math.min(row, MOST_ROWS - 1) * 2.9}rem` }}
               >
                 <a
                   href={`#mark-${mark.id}`}
                   onClick={go(ms)}
                   aria-label={`${KIND_WORDS[mark.kind]} at ${formatTimecode(ms)}: ${words}. ${STATE_WORDS[mark.state]}`}
-                  className={`block truncate rounded-sm border px-1.5 py-1 text-sm no-underline ${mark.state === "pencilled" ? "border-dashed border-on-graphite-soft text-on-graphite" : "border-brass bg-brass-tint text-ink"}`}
+                  className={`flex min-h-11 items-center rounded-sm border px-1.5 text-sm no-underline ${mark.state === "pencilled" ? "border-dashed border-on-graphite-soft text-on-graphite" : "border-brass bg-brass-tint text-ink"}`}
                 >
-                  {words}
+                  <span className="truncate">{words}</span>
                 </a>
               </li>
             );

@@ -63,7 +63,10 @@ export function MarkFormPage({
         title={title}
         under={
           <>
-            In <Link to={back}>{lesson.title}</Link>
+            In{" "}
+            <Link to={back} className="inline-flex min-h-11 items-center">
+              {lesson.title}
+            </Link>
           </>
         }
       >

@@ -45,7 +45,7 @@ export function MarkRow({
   const title = markTitle(mark);
   const value = figure(mark);
   const wrong = refusal?.errors[""];
-  const act = (intent: "ink" | "erase", label: string, look: "primary" | "ghost" | "quiet") => (
+  const act = (intent: "ink" | "erase", label: string, look: "ghost" | "quiet") => (
     <Form method="post" preventScrollReset>
       <input type="hidden" name="intent" value={intent} />
       <input type="hidden" name="markId" value={mark.id} />
@@ -90,9 +90,9 @@ export function MarkRow({
         </p>
       ) : null}
       <div className="flex flex-wrap gap-2">
-        {mark.state === "pencilled" ? act("ink", "Ink", "primary") : null}
+        {mark.state === "pencilled" ? act("ink", "Ink", "ghost") : null}
         <ButtonLink
-          look="ghost"
+          look={mark.state === "pencilled" ? "quiet" : "ghost"}
           to={href("/bench/lessons/:lessonId/marks/:markId", { lessonId, markId: mark.id })}
           aria-label={`Edit: ${title}`}
         >

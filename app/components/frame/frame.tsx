@@ -56,14 +56,14 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
         Skip to the content
       </a>
       <header className="no-print bg-enamel-deep text-on-graphite">
-        <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-5 gap-y-2 px-4 py-2 sm:px-7">
+        <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-5 gap-y-1.5 px-4 py-2 sm:px-7">
           <Link to={href("/")} className="no-underline" aria-label="Castlenut, library">
             <Brand />
           </Link>
-          <div className="order-last w-full lg:order-none lg:w-auto lg:max-w-xl lg:flex-1">
+          <div className="order-2 w-full lg:order-none lg:w-auto lg:min-w-60 lg:flex-1">
             <SearchBox />
           </div>
-          <div className="ml-auto flex items-center gap-3">
+          <div className="ml-auto flex items-center gap-3 xl:order-4 xl:ml-0">
             <UnitSwitch viewer={viewer} />
             <Link
               to={href("/account")}
@@ -73,7 +73,10 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
               {initials(viewer.name)}
             </Link>
           </div>
-          <nav aria-label="Places" className="-mx-2 flex w-full gap-1 overflow-x-auto lg:order-last">
+          <nav
+            aria-label="Places"
+            className="order-3 -mx-2 flex w-full gap-1 overflow-x-auto xl:order-3 xl:mx-0 xl:w-auto"
+          >
             {places.map((place) => (
               <NavLink
                 key={place.to}

@@ -1,14 +1,14 @@
 /** How far a person is with a lesson. */
 export type NutState = Readonly<{ seen: boolean; answered: boolean; shown: boolean; changedSince?: boolean }>;
 
-// A castle nut from above: a hexagon with slots cut into the rim, one in the middle of every second flat.
+// A castle nut from above: a hexagon with six slots cut into the rim, one in the middle of every flat.
 // Drawn once, in a square of 36 with the nut's middle at 18, 18; logo and progress glyph share it.
 const RADIUS = 16;
 const FLAT = RADIUS * Math.cos(Math.PI / 6);
-const SLOT = { width: 6.4, depth: 5.2 } as const;
-/** Where the slots stand, clockwise from the top, in degrees. */
-export const SLOT_TURNS = [0, 120, 240] as const;
-export const HOLE_RADIUS = 5;
+const SLOT = { width: 4.6, depth: 4.2 } as const;
+/** The slots that carry the progress, clockwise from the top, in degrees. */
+const PROGRESS = [0, 120, 240] as const;
+export const HOLE_RADIUS = 5.4;
 
 function turned(turn: number, x: number, y: number): string {
   const angle = (turn * Math.PI) / 180;
@@ -21,7 +21,6 @@ export const NUT_PATH = [0, 60, 120, 180, 240, 300]
   .map((turn, n) => {
     const half = SLOT.width / 2;
     const corner = `${n === 0 ? "M" : "L"}${turned(turn, -RADIUS / 2, -FLAT)}`;
-    if (turn % 120 !== 0) return corner;
     const cut = [
       turned(turn, -half, -FLAT),
       turned(turn, -half, -FLAT + SLOT.depth),
@@ -36,11 +35,10 @@ export const NUT_PATH = [0, 60, 120, 180, 240, 300]
 function Key({ turn }: { turn: number }) {
   return (
     <rect
-      x={18 - SLOT.width / 2 + 0.6}
-      y={18 - FLAT - 1.2}
-      width={SLOT.width - 1.2}
-      height={SLOT.depth + 0.6}
-      rx={0.8}
+      x={18 - SLOT.width / 2}
+      y={18 - FLAT - 1.6}
+      width={SLOT.width}
+      height={SLOT.depth + 1.6}
       transform={`rotate(${turn} 18 18)`}
       className="fill-enamel-text"
     />
@@ -72,9 +70,9 @@ export function CastleNut({ state, size = 36 }: { state: NutState; size?: number
         {...(state.changedSince ? { strokeDasharray: "3 2.2" } : {})}
       />
       <circle cx={18} cy={18} r={HOLE_RADIUS} className="fill-paper stroke-ink" strokeWidth={1.2} />
-      {state.seen ? <Key turn={SLOT_TURNS[0]} /> : null}
-      {state.answered ? <Key turn={SLOT_TURNS[1]} /> : null}
-      {state.shown ? <Key turn={SLOT_TURNS[2]} /> : null}
+      {state.seen ? <Key turn={PROGRESS[0]} /> : null}
+      {state.answered ? <Key turn={PROGRESS[1]} /> : null}
+      {state.shown ? <Key turn={PROGRESS[2]} /> : null}
     </svg>
   );
 }

@@ -1,6 +1,6 @@
-import { StoppedFigure } from "./before-check";
 import { PlateFrame } from "./plate-frame";
 import { PlateHead } from "./plate-head";
+import { metalOf, StoppedFigure } from "./plate-value";
 import type { PlateProps } from "./plate";
 
 /** What the recording says or shows is wrong; this is right. */
@@ -14,22 +14,25 @@ export function CorrectionPlate({ of, view, current = false, foot }: PlateProps)
       name={name}
       current={current}
       foot={foot}
-      metal={showing === "in-doubt" ? "struck" : "solid"}
-    >
-      <PlateHead mark={mark} name={name} />
-      {showing === "in-doubt" ? (
-        <StoppedFigure of={of} view={view} />
-      ) : (
+      metal={metalOf(showing)}
+      lead={
         <>
-          {mark.replaces === "" ? null : (
-            <p className="text-sm">
-              Wrong in the recording: <s>{mark.replaces}</s>
-            </p>
+          <PlateHead mark={mark} name={name} />
+          {showing === "in-doubt" ? (
+            <StoppedFigure of={of} view={view} />
+          ) : (
+            <>
+              {mark.replaces === "" ? null : (
+                <p className="text-sm">
+                  Wrong in the recording: <s>{mark.replaces}</s>
+                </p>
+              )}
+              <p className="text-lg leading-snug font-semibold">Right: {mark.words}</p>
+              {mark.reason === "" ? null : <p className="text-sm">{mark.reason}</p>}
+            </>
           )}
-          <p className="text-lg leading-snug font-semibold">Right: {mark.words}</p>
-          {mark.reason === "" ? null : <p className="text-sm">{mark.reason}</p>}
         </>
-      )}
-    </PlateFrame>
+      }
+    />
   );
 }

@@ -1,8 +1,6 @@
-import { StoppedFigure, UncheckedFigure, WithheldFigure } from "./before-check";
-import { Figures } from "./figure";
-import { figureGroups } from "./figures";
 import { PlateFrame } from "./plate-frame";
 import { MoreFacts, PlateHead } from "./plate-head";
+import { metalOf, PlateValue } from "./plate-value";
 import type { PlateProps } from "./plate";
 
 /** What the number is: a limit to hold, a reading of this one car, or a dimension. */
@@ -19,7 +17,6 @@ export function MeasurePlate({ of, view, size = "normal", current = false, foot 
   const { mark, showing } = of;
   const name = mark.component || "Measure";
   const role = roleWords(of);
-  const shown = showing === "checked" || showing === "self-checked";
   return (
     <PlateFrame
       of={of}
@@ -27,20 +24,16 @@ export function MeasurePlate({ of, view, size = "normal", current = false, foot 
       name={name}
       current={current}
       foot={foot}
-      metal={showing === "in-doubt" ? "struck" : showing === "unchecked" ? "hatched" : "solid"}
+      metal={metalOf(showing)}
+      ruled
+      lead={
+        <>
+          <PlateHead mark={mark} name={name} />
+          <PlateValue of={of} view={view} size={size} />
+        </>
+      }
     >
-      <div className="plate-ruler" aria-hidden="true" />
-      <PlateHead mark={mark} name={name} />
-      {showing === "in-doubt" ? (
-        <StoppedFigure of={of} view={view} />
-      ) : showing === "withheld" ? (
-        <WithheldFigure of={of} />
-      ) : showing === "unchecked" ? (
-        <UncheckedFigure of={of} view={view} />
-      ) : (
-        <Figures groups={figureGroups(mark.values, view.units)} size={size} />
-      )}
-      {role === "" || !(shown || showing === "unchecked") ? null : <p className="text-sm">{role}</p>}
+      {role === "" ? null : <p className="text-[0.95rem] leading-snug">{role}</p>}
       {mark.tightenedState === "" ? null : <p className="text-sm">When: {mark.tightenedState}</p>}
       <MoreFacts mark={mark} />
     </PlateFrame>

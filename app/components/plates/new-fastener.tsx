@@ -2,16 +2,15 @@
 export function NewFastener({ words = "NEW FASTENER" }: { words?: string }) {
   return (
     <p className="inline-flex items-center gap-2 font-figure text-xl leading-none font-semibold">
-      <svg
-        viewBox="0 0 30 26"
-        className="h-7 w-8 shrink-0 stroke-ink"
-        fill="none"
-        strokeWidth={1.8}
-        aria-hidden="true"
-      >
-        {/* A bolt from the side: head, washer face, shank with thread. */}
-        <path d="M3 8h7v10H3zM10 6.5v13M10 10h15l2 1.5v3L25 16H10M14 10v6M17 10v6M20 10v6M23 10v6" />
-        <path d="M3 24 27 2" strokeWidth={3} />
+      <svg viewBox="0 0 40 28" className="h-8 w-11 shrink-0" fill="none" aria-hidden="true">
+        {/* A bolt from the side: head, washer face, shank with thread. Crossed out on a clear edge. */}
+        <path
+          d="M3 7h8v14H3zM11 4.500h2.500v19H11zM13.500 9.500H35l2.500 2v5l-2.500 2H13.500z"
+          className="fill-ink"
+        />
+        <path d="M20 9.500v9M24 9.500v9M28 9.500v9M32 9.500v9" className="stroke-sheet" strokeWidth={1.4} />
+        <path d="M5 27 35 1" className="stroke-sheet" strokeWidth={7} />
+        <path d="M5 27 35 1" className="stroke-ink" strokeWidth={3} />
       </svg>
       {words}
     </p>

@@ -38,7 +38,7 @@ export function LooksWrong({ of: { mark }, name }: { of: LearnerMark; name: stri
   return (
     <Link
       to={`/lessons/${mark.lessonId}/values/${mark.id}/wrong`}
-      className="no-print inline-flex min-h-11 items-center text-sm font-semibold"
+      className="no-print inline-flex min-h-11 items-center text-sm font-semibold lg:min-h-8"
     >
       This looks wrong<span className="sr-only">: {name}</span>
     </Link>
@@ -52,6 +52,8 @@ export function PlateFrame({
   name,
   metal,
   current = false,
+  ruled = false,
+  lead,
   foot,
   children,
 }: {
@@ -61,8 +63,12 @@ export function PlateFrame({
   name: string;
   metal: Metal;
   current?: boolean;
+  /** With a ruler's edge. */
+  ruled?: boolean;
+  /** Component and figure: on a wide plate they stand left of the facts. */
+  lead: React.ReactNode;
   foot?: React.ReactNode;
-  children: React.ReactNode;
+  children?: React.ReactNode;
 }) {
   return (
     <div
@@ -72,11 +78,15 @@ export function PlateFrame({
       data-current={current ? "yes" : undefined}
       {...(current ? { "aria-current": "step" as const } : {})}
     >
+      {ruled ? <div className="plate-ruler" aria-hidden="true" /> : null}
       <div className="plate-in">
-        {children}
-        <Doubts of={of} view={view} />
-        <SourceLine of={of} />
-        <div className="-mb-2 flex flex-wrap items-center gap-x-5">
+        <div className="plate-lead">{lead}</div>
+        <div className="plate-facts">
+          {children}
+          <Doubts of={of} view={view} />
+          <SourceLine of={of} />
+        </div>
+        <div className="plate-foot">
           {foot}
           <LooksWrong of={of} name={name} />
         </div>

@@ -43,9 +43,11 @@ export function SignalPanel({
         {word === "NOTICE" ? null : <AlertTriangle />}
         {word}
       </p>
-      <div className="signal-in px-3 py-2">
-        <p className={`leading-snug font-semibold ${small ? "text-sm" : "text-lg"}`}>{words}</p>
-        {reason === "" ? null : <p>{reason}</p>}
+      <div className="signal-in flex flex-wrap items-end justify-between gap-x-6 px-3 py-2">
+        <div>
+          <p className={`leading-snug font-semibold ${small ? "text-sm" : "text-lg"}`}>{words}</p>
+          {reason === "" ? null : <p>{reason}</p>}
+        </div>
         {foot === undefined ? null : <div className="flex flex-wrap gap-x-5">{foot}</div>}
       </div>
     </div>

@@ -1,9 +1,9 @@
 import { quantityOfValue } from "~/lessons/quantity-of-value";
 import type { Mark, MarkValue } from "~/lessons/mark";
 import { formatQuantity, unitLabel } from "~/quantities/format";
-import { StoppedFigure, WithheldFigure } from "./before-check";
 import { PlateFrame } from "./plate-frame";
 import { MoreFacts, PlateHead } from "./plate-head";
+import { metalOf, PlateValue } from "./plate-value";
 import type { PlateProps } from "./plate";
 
 function sizeWords(value: MarkValue): { figure: string; unit: string } {
@@ -22,7 +22,7 @@ function Hexagon({ figure, solid }: { figure: string; solid: boolean }) {
   return (
     <svg viewBox="0 0 64 56" className="h-14 w-16 shrink-0" aria-hidden="true">
       <polygon
-        points="63,28 47.500,54.800 16.500,54.800 1,28 16.500,1.200 47.500,1.200"
+        points="63,28 47.5,54.8 16.5,54.8 1,28 16.5,1.2 47.5,1.2"
         strokeWidth={2}
         className={solid ? "fill-ink stroke-ink" : "fill-enamel-tint stroke-ink"}
       />
@@ -31,7 +31,7 @@ function Hexagon({ figure, solid }: { figure: string; solid: boolean }) {
         y={28}
         dy="0.36em"
         textAnchor="middle"
-        fontSize={figure.length > 3 ? 19 : 27}
+        fontSize={figure.length > 3 ? 20 : 29}
         className={`font-figure font-semibold ${solid ? "fill-sheet" : "fill-ink"}`}
       >
         {figure}
@@ -41,15 +41,16 @@ function Hexagon({ figure, solid }: { figure: string; solid: boolean }) {
 }
 
 /** A tool: its size stands in the hexagon, always in the unit that is marked on it. */
-export function ToolPlate({ of, view, current = false, foot }: PlateProps) {
+export function ToolPlate({ of, view, size = "normal", current = false, foot }: PlateProps) {
   const { mark, showing } = of;
   const name = mark.toolName || "Tool";
-  const size =
+  const own =
     mark.values.find(({ role }) => role === "size") ?? mark.values.find(({ role }) => role !== "drive");
   const drive = mark.values.find(({ role }) => role === "drive");
-  const words = size ? sizeWords(size) : null;
+  const words = own ? sizeWords(own) : null;
   const driveWords = drive ? sizeWords(drive) : null;
-  const solid = showing === "checked" || showing === "self-checked";
+  const inFull = showing === "checked" || showing === "self-checked";
+  const stopped = showing === "in-doubt" || showing === "withheld";
   return (
     <PlateFrame
       of={of}
@@ -57,42 +58,33 @@ export function ToolPlate({ of, view, current = false, foot }: PlateProps) {
       name={name}
       current={current}
       foot={foot}
-      metal={showing === "in-doubt" ? "struck" : showing === "unchecked" && words ? "hatched" : "solid"}
-    >
-      {showing === "in-doubt" || showing === "withheld" ? (
+      metal={words === null && !stopped ? "solid" : metalOf(showing)}
+      lead={
         <>
-          <PlateHead mark={mark} name={name} />
-          {showing === "withheld" ? <WithheldFigure of={of} /> : <StoppedFigure of={of} view={view} />}
-        </>
-      ) : (
-        <div className="flex items-center gap-4">
-          {words && solid ? <Hexagon figure={words.figure} solid={!isKey(mark)} /> : null}
-          <div className="min-w-0">
-            <p className="font-semibold">
-              {words === null ? null : solid ? (
-                <span className="font-figure text-3xl leading-none">
-                  <span className="sr-only">{words.figure}</span> {words.unit}{" "}
-                </span>
-              ) : (
-                <span>
-                  Not yet checked:{" "}
-                  <span className="font-normal">
-                    {words.figure} {words.unit}{" "}
+          <div className="flex items-center gap-4">
+            {words && inFull ? <Hexagon figure={words.figure} solid={!isKey(mark)} /> : null}
+            <div className="min-w-0">
+              <p className="leading-snug font-semibold">
+                {words && inFull ? (
+                  <span className="font-figure text-2xl leading-none">
+                    <span className="sr-only">{words.figure}</span> {words.unit}{" "}
                   </span>
-                </span>
-              )}
-              {name}
-            </p>
-            {driveWords ? (
-              <p className="text-sm">
-                Drive {driveWords.figure} {driveWords.unit}
+                ) : null}
+                {name}
               </p>
-            ) : null}
-            {mark.component === "" ? null : <p className="text-sm">For: {mark.component}</p>}
-            <PlateHead mark={mark} name="" />
+              {driveWords ? (
+                <p className="text-sm">
+                  Drive {driveWords.figure} {driveWords.unit}
+                </p>
+              ) : null}
+              {mark.component === "" ? null : <p className="text-sm">For: {mark.component}</p>}
+              <PlateHead mark={mark} name="" />
+            </div>
           </div>
-        </div>
-      )}
+          {stopped || (words && !inFull) ? <PlateValue of={of} view={view} size={size} /> : null}
+        </>
+      }
+    >
       <MoreFacts mark={mark} />
     </PlateFrame>
   );

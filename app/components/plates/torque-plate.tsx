@@ -1,9 +1,7 @@
-import { StoppedFigure, UncheckedFigure, WithheldFigure } from "./before-check";
-import { Figures } from "./figure";
-import { figureGroups } from "./figures";
 import { LeftHandThread, NewFastener } from "./new-fastener";
 import { PlateFrame } from "./plate-frame";
 import { MoreFacts, PlateHead } from "./plate-head";
+import { metalOf, PlateValue } from "./plate-value";
 import { notStatedWords, torqueFacts } from "./plate-words";
 import type { PlateProps } from "./plate";
 
@@ -12,7 +10,7 @@ export function TorquePlate({ of, view, size = "normal", current = false, foot }
   const { mark, showing } = of;
   const name = mark.component || "Torque";
   const open = notStatedWords(mark);
-  const facts = torqueFacts(mark);
+  const stopped = showing === "in-doubt";
   return (
     <PlateFrame
       of={of}
@@ -20,33 +18,25 @@ export function TorquePlate({ of, view, size = "normal", current = false, foot }
       name={name}
       current={current}
       foot={foot}
-      metal={showing === "in-doubt" ? "struck" : showing === "unchecked" ? "hatched" : "solid"}
-    >
-      <PlateHead mark={mark} name={name} />
-      {showing === "in-doubt" ? (
-        <StoppedFigure of={of} view={view} />
-      ) : showing === "withheld" ? (
-        <WithheldFigure of={of} />
-      ) : showing === "unchecked" ? (
-        <UncheckedFigure of={of} view={view} />
-      ) : (
-        <Figures groups={figureGroups(mark.values, view.units)} size={size} />
-      )}
-      {mark.reuse === "replace-always" || mark.threadDirection === "left" ? (
-        <div className="flex flex-wrap gap-x-5 gap-y-1">
+      metal={metalOf(showing)}
+      lead={
+        <>
+          <PlateHead mark={mark} name={name} />
+          <PlateValue of={of} view={view} size={size} />
           {mark.reuse === "replace-always" ? <NewFastener /> : null}
           {mark.threadDirection === "left" ? <LeftHandThread /> : null}
-        </div>
-      ) : null}
-      {showing === "in-doubt" ? null : (
+        </>
+      }
+    >
+      {stopped ? null : (
         <ul className="grid gap-0.5 text-[0.95rem] leading-snug">
-          {facts.map((fact) => (
+          {torqueFacts(mark).map((fact) => (
             <li key={fact}>{fact}</li>
           ))}
         </ul>
       )}
       <MoreFacts mark={mark} />
-      {open === "" || showing === "in-doubt" ? null : <p className="text-sm text-ink-soft">{open}</p>}
+      {open === "" || stopped ? null : <p className="text-sm text-ink-soft">{open}</p>}
     </PlateFrame>
   );
 }

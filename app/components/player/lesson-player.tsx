@@ -35,7 +35,7 @@ function Start({
         event.preventDefault();
         jump({ toMs, play: true });
       }}
-      className={`inline-flex min-h-11 items-center gap-2 rounded px-4 font-semibold no-underline ${look}`}
+      className={`inline-flex min-h-11 items-center gap-2 rounded px-3 font-semibold no-underline sm:px-4 ${look}`}
     >
       <svg viewBox="0 0 20 20" className="size-4 fill-current" aria-hidden="true">
         <path d="M4 2.500 17 10 4 17.500z" />
@@ -45,12 +45,12 @@ function Start({
   );
   const first = "bg-on-graphite text-graphite";
   return (
-    <div className="flex items-center gap-3 lg:absolute lg:inset-0 lg:justify-center">
+    <div className="flex items-center gap-3 max-sm:pl-4 lg:absolute lg:inset-0 lg:justify-center">
       {poster === null ? null : (
         <img
           src={poster}
           alt=""
-          className="aspect-video h-14 shrink-0 object-cover lg:absolute lg:inset-0 lg:h-full lg:w-full lg:opacity-60"
+          className="aspect-video h-14 shrink-0 object-cover max-sm:hidden lg:absolute lg:inset-0 lg:h-full lg:w-full lg:opacity-60"
         />
       )}
       <div className="relative flex flex-wrap items-center gap-2 py-1.5 pr-2 lg:justify-center">

@@ -1,9 +1,11 @@
 import type { LearnerMark } from "~/lessons/learner-lesson.server";
-import { valueLine } from "./figures";
+import { Figures, type FigureSize } from "./figure";
+import { figureGroups, valueLine } from "./figures";
+import type { Metal } from "./plate-frame";
 import { momentDay, type PlateView } from "./plate-words";
 
 /** A value that nobody has checked: the words first, the figure as plain text. */
-export function UncheckedFigure({ of: { mark }, view }: { of: LearnerMark; view: PlateView }) {
+function UncheckedFigure({ of: { mark }, view }: { of: LearnerMark; view: PlateView }) {
   return (
     <p>
       <strong>Not yet checked.</strong> As written down: {valueLine(mark.values, view.units)}
@@ -44,4 +46,29 @@ export function StoppedFigure({ of: { mark, doubts }, view }: { of: LearnerMark;
       ))}
     </div>
   );
+}
+
+/** The value of a mark as far as a learner may see it. */
+export function PlateValue({ of, view, size }: { of: LearnerMark; view: PlateView; size: FigureSize }) {
+  switch (of.showing) {
+    case "in-doubt":
+      return <StoppedFigure of={of} view={view} />;
+    case "withheld":
+      return <WithheldFigure of={of} />;
+    case "unchecked":
+      return <UncheckedFigure of={of} view={view} />;
+    case "checked":
+    case "self-checked":
+      return <Figures groups={figureGroups(of.mark.values, view.units)} size={size} />;
+    case "plain":
+    case "pencilled":
+      return null;
+    default:
+      return of.showing satisfies never;
+  }
+}
+
+/** How the metal of a plate with a figure looks. */
+export function metalOf(showing: LearnerMark["showing"]): Metal {
+  return showing === "in-doubt" ? "struck" : showing === "unchecked" ? "hatched" : "solid";
 }
