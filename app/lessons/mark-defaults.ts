@@ -14,16 +14,14 @@ export function newMarkFields(
 ): Record<string, string> {
   const at = fileTime(draft.clips, asked.atMs);
   const covering = at && chapterAt(draft.chapters, at.recordingId as RecordingId, at.fileMs);
-  const chapter =
-    draft.chapters.find((chapter) => chapter.id === asked.chapterId) ??
-    covering ??
-    inPlayingOrder(draft.chapters, draft.clips)[0];
-  return {
-    at: formatExactTimecode(asked.atMs),
-    chapterId: chapter?.id ?? "",
-    readOn: today,
-    newKind: "maker",
-  };
+  const chosen = draft.chapters.find((chapter) => chapter.id === asked.chapterId);
+  const chapter = chosen ?? covering ?? inPlayingOrder(draft.chapters, draft.clips)[0];
+  // An address rounds to tenths: a moment just before the chosen chapter means its start.
+  const atMs =
+    chosen && chosen !== covering
+      ? nearestLessonTime(draft.clips, chosen.recordingId, chosen.startMs)
+      : asked.atMs;
+  return { at: formatExactTimecode(atMs), chapterId: chapter?.id ?? "", readOn: today, newKind: "maker" };
 }
 
 /** What the form of a mark starts with: the mark as it is. */
