@@ -1,14 +1,14 @@
 /** How far a person is with a lesson. */
 export type NutState = Readonly<{ seen: boolean; answered: boolean; shown: boolean; changedSince?: boolean }>;
 
-// A castle nut from above: a hexagon with six slots cut into the rim, one in the middle of every flat.
+// A castle nut from above: a hexagon with slots cut into the rim, one in the middle of every second flat.
 // Drawn once, in a square of 36 with the nut's middle at 18, 18; logo and progress glyph share it.
 const RADIUS = 16;
 const FLAT = RADIUS * Math.cos(Math.PI / 6);
-const SLOT = { width: 4.6, depth: 4.2 } as const;
-/** The slots that carry the progress, clockwise from the top, in degrees. */
-const PROGRESS = [0, 120, 240] as const;
-export const HOLE_RADIUS = 5.4;
+const SLOT = { width: 4.4, depth: 4.4 } as const;
+/** The slots, clockwise from the top, in degrees; they fill in this order. */
+const SLOTS = [0, 120, 240] as const;
+export const HOLE_RADIUS = 5.6;
 
 function turned(turn: number, x: number, y: number): string {
   const angle = (turn * Math.PI) / 180;
@@ -21,6 +21,7 @@ export const NUT_PATH = [0, 60, 120, 180, 240, 300]
   .map((turn, n) => {
     const half = SLOT.width / 2;
     const corner = `${n === 0 ? "M" : "L"}${turned(turn, -RADIUS / 2, -FLAT)}`;
+    if (turn % 120 !== 0) return corner;
     const cut = [
       turned(turn, -half, -FLAT),
       turned(turn, -half, -FLAT + SLOT.depth),
@@ -70,9 +71,9 @@ export function CastleNut({ state, size = 36 }: { state: NutState; size?: number
         {...(state.changedSince ? { strokeDasharray: "3 2.2" } : {})}
       />
       <circle cx={18} cy={18} r={HOLE_RADIUS} className="fill-paper stroke-ink" strokeWidth={1.2} />
-      {state.seen ? <Key turn={PROGRESS[0]} /> : null}
-      {state.answered ? <Key turn={PROGRESS[1]} /> : null}
-      {state.shown ? <Key turn={PROGRESS[2]} /> : null}
+      {state.seen ? <Key turn={SLOTS[0]} /> : null}
+      {state.answered ? <Key turn={SLOTS[1]} /> : null}
+      {state.shown ? <Key turn={SLOTS[2]} /> : null}
     </svg>
   );
 }
