@@ -78,7 +78,7 @@ export type CheckPage = Readonly<{
 export function marksForCheck(scope: Scope, lessonId: LessonId): CheckPage | undefined {
   const draft = loadDraft(scope, lessonId);
   if (!draft) return undefined;
-  const at = (mark: Mark) => lessonTime(draft.clips, mark.recordingId, mark.atMs) ?? Number.MAX_SAFE_INTEGER;
+  const at = (mark: Mark) => nearestLessonTime(draft.clips, mark.recordingId, mark.atMs);
   const own = draft.marks.filter(isForCheck).sort((a, b) => at(a) - at(b));
   const authors = authorsOf(
     scope,
