@@ -120,7 +120,7 @@ test("after 4000 random edits the chapters still lie end to end over the same st
     ] as const) {
       const own = chapters
         .filter((chapter) => chapter.recordingId === recording)
-        .sort((a, b) => a.startMs - b.startMs);
+        .toSorted((a, b) => a.startMs - b.startMs);
       expect(own[0]?.startMs).toBe(from);
       expect(own.at(-1)?.endMs).toBe(to);
       own.forEach((chapter, at) => {

@@ -43,7 +43,7 @@ export function editChapters(
   const recordingId = edit.edit === "add" ? edit.recordingId : (target as DraftChapter).recordingId;
   const own = chapters
     .filter((chapter) => chapter.recordingId === recordingId)
-    .sort((a, b) => a.startMs - b.startMs);
+    .toSorted((a, b) => a.startMs - b.startMs);
   const others = chapters.filter((chapter) => chapter.recordingId !== recordingId);
   const first = own[0];
   const last = own.at(-1);

@@ -42,8 +42,8 @@ const SINGULAR_S = new Set([
 ]);
 
 function singular(word: string): string {
-  if (word.length < 4 || SINGULAR_S.has(word) || /ss$/.test(word)) return word;
-  if (/ies$/.test(word)) return `${word.slice(0, -3)}y`;
+  if (word.length < 4 || SINGULAR_S.has(word) || word.endsWith("ss")) return word;
+  if (word.endsWith("ies")) return `${word.slice(0, -3)}y`;
   if (/(?:ch|sh|x)es$/.test(word)) return word.slice(0, -2);
   return word.endsWith("s") ? word.slice(0, -1) : word;
 }
@@ -64,7 +64,7 @@ type Name = Readonly<{ words: readonly string[]; component: Component }>;
 // Longest first: "sway bar link" is read before "sway bar".
 const NAMES: readonly Name[] = COMPONENTS.flatMap((component) =>
   component.names.map((name): Name => ({ words: wordsOf(name), component })),
-).sort((a, b) => b.words.length - a.words.length || b.words.join(" ").length - a.words.join(" ").length);
+).toSorted((a, b) => b.words.length - a.words.length || b.words.join(" ").length - a.words.join(" ").length);
 
 const NAMES_BY_FIRST = new Map<string, Name[]>();
 for (const name of NAMES) {
@@ -98,6 +98,10 @@ function read(text: string): Read {
   return { components, rest };
 }
 
+function distinct(words: readonly string[]): string[] {
+  return [...new Set(words)].toSorted();
+}
+
 /**
  * One key for every way to name the same thing: "Lower drop link nut", "Nut, sway-bar link, bottom" and
  * `componentKey("sway bar link nut", "lower")` are equal. Components first, then what else was said, each in
@@ -106,8 +110,7 @@ function read(text: string): Read {
  */
 export function componentKey(words: string, position = ""): string {
   const { components, rest } = read(`${words} ${position}`);
-  const parts = (list: readonly string[]) => [...new Set(list)].sort();
-  return [...parts(components.map((component) => component.key)), ...parts(rest)].join("+");
+  return [...distinct(components.map((component) => component.key)), ...distinct(rest)].join("+");
 }
 
 /** The components of the vocabulary that are named in these words, in the order of the words. */

@@ -110,5 +110,5 @@ export function inPlayingOrder<C extends Readonly<{ recordingId: RecordingId; st
     if (!order.has(clip.recordingId)) order.set(clip.recordingId, n);
   });
   const place = (chapter: C) => order.get(chapter.recordingId) ?? clips.length;
-  return [...chapters].sort((a, b) => place(a) - place(b) || a.startMs - b.startMs);
+  return chapters.toSorted((a, b) => place(a) - place(b) || a.startMs - b.startMs);
 }

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import type { LessonId, RecordingId, VehicleId } from "#drizzle/schema/ids";
-import { choice, draftVersion, formId, line, modelYear, paragraph, requiredLine } from "./form-parts";
+import { draftVersion, formId, line, modelYear, paragraph, requiredLine } from "./form-parts";
 import type { NewVehicle } from "./vehicles.server";
 import { wrong } from "./common-fields";
 

@@ -20,7 +20,7 @@ export function piecesOf(clips: readonly SnapshotClip[]): Piece[] {
       pieces.push({ recordingId: clip.recordingId, fromMs, toMs, lessonStartMs, clip: n });
       lessonStartMs += toMs - fromMs;
     };
-    for (const cut of [...clip.cuts].sort((a, b) => a.fromMs - b.fromMs)) {
+    for (const cut of clip.cuts.toSorted((a, b) => a.fromMs - b.fromMs)) {
       add(Math.min(cut.fromMs, clip.outMs));
       fromMs = Math.max(fromMs, Math.min(cut.toMs, clip.outMs));
     }

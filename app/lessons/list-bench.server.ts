@@ -81,7 +81,7 @@ export function listReadyRecordings(scope: InShop): ReadyRecording[] {
       and(eq(recordings.shopId, scope.shopId), eq(recordings.state, "ready"), isNull(recordings.deletedAt)),
     )
     .all()
-    .sort((a, b) => (a.filmed || a.createdAt) - (b.filmed || b.createdAt))
+    .toSorted((a, b) => (a.filmed || a.createdAt) - (b.filmed || b.createdAt))
     .map(({ id, title, durationMs }) => ({ id, title, durationMs: durationMs ?? 0, used: used.has(id) }));
 }
 

@@ -2,20 +2,20 @@ import type { Mark, MarkValue } from "./mark";
 import { SIGNAL_WORDS_FOR_PEOPLE } from "./mark-words";
 import { valuesText } from "./values-text";
 
-/** Which document a mark's source is, for the form; "" without one. */
-export type SourceFields = Readonly<{ documentId: string; place: string; readOn: string }>;
+function yearText(year: number | null): string {
+  return year === null ? "" : String(year);
+}
 
 /** A mark as its form's fields, by name: what the form was filled with, so that saving it unchanged changes nothing. */
 export function markFields(mark: Mark): Record<string, string> {
   const rows = (roles: readonly MarkValue["role"][]) =>
     mark.values.filter((value) => roles.includes(value.role));
-  const text = (year: number | null) => (year === null ? "" : String(year));
   const common = {
     component: mark.component,
     side: mark.side,
     position: mark.position,
-    yearFrom: text(mark.applies.yearFrom),
-    yearTo: text(mark.applies.yearTo),
+    yearFrom: yearText(mark.applies.yearFrom),
+    yearTo: yearText(mark.applies.yearTo),
     engine: mark.applies.engine,
     drive: mark.applies.drive,
     variant: mark.applies.variant,

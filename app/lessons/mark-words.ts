@@ -146,11 +146,14 @@ export function choices<K extends string>(words: Readonly<Record<K, string>>): {
   return (Object.keys(words) as K[]).map((value) => ({ value, label: words[value] }));
 }
 
+function short(text: string): string {
+  return text.length > 90 ? `${text.slice(0, 89).trimEnd()}…` : text;
+}
+
 /** What a mark is about, in a few words for a list: "Lower link nut", "Socket", "WARNING: …". */
 export function markTitle(
   mark: Pick<Mark, "kind" | "component" | "toolName" | "product" | "signalWord" | "words" | "replaces">,
 ): string {
-  const short = (text: string) => (text.length > 90 ? `${text.slice(0, 89).trimEnd()}…` : text);
   switch (mark.kind) {
     case "torque":
     case "measure":

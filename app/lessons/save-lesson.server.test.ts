@@ -97,6 +97,10 @@ test("the same new lesson posted twice is one lesson", () => {
     expect(db.select().from(table).all()).toHaveLength(1);
 });
 
+function yes(...ids: RecordingId[]): Record<string, string> {
+  return Object.fromEntries(ids.map((id) => [`recording-${id}`, "yes"]));
+}
+
 test("a new lesson that cannot be made says why and leaves nothing behind", () => {
   const { db, scope } = aBench();
   const ready = aRecording(scope);
@@ -104,7 +108,6 @@ test("a new lesson that cannot be made says why and leaves nothing behind", () =
   const deleted = aRecording(scope, { deletedAt: NOON });
   const theirs = aScope(db, aShop(db), "owner");
   const theirRecording = aRecording(theirs);
-  const yes = (...ids: RecordingId[]) => Object.fromEntries(ids.map((id) => [`recording-${id}`, "yes"]));
   const errors = (fields: Record<string, string>) => {
     const made = create(scope, fields);
     expect([lessons, clips, chapters, vehicles].flatMap((table) => db.select().from(table).all())).toEqual(
@@ -220,9 +223,9 @@ test("a new chapter takes the marks of its stretch along, and the same one poste
   expect(save(request, 1)).toEqual({ ok: true });
   expect(save(request, 1)).toEqual({ ok: true });
   expect(titles()).toEqual(["Remove", "New", "Fit"]);
-  const of_ = (id: string) => loadDraft(scope, lessonId)?.marks.find((mark) => mark.id === id);
-  expect(of_(early)).toMatchObject({ chapterId: first, atMs: 10_000 });
-  expect(of_(late)).toMatchObject({ chapterId: "id" in request ? request.id : "", atMs: 200_000 });
+  const markOf = (id: string) => loadDraft(scope, lessonId)?.marks.find((mark) => mark.id === id);
+  expect(markOf(early)).toMatchObject({ chapterId: first, atMs: 10_000 });
+  expect(markOf(late)).toMatchObject({ chapterId: "id" in request ? request.id : "", atMs: 200_000 });
 });
 
 test("marks of a removed chapter, erased ones too, go to the chapter that covers them now", () => {

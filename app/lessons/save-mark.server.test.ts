@@ -405,6 +405,10 @@ test("a correction stands beside the value that it corrects", () => {
   });
 });
 
+function gone(noun: string) {
+  return { ok: false, reason: "missing", noun };
+}
+
 test("chapters, documents, marks and lessons of others are as absent as missing ones", () => {
   const bench = aBench();
   const other = aLesson(bench.scope);
@@ -413,7 +417,6 @@ test("chapters, documents, marks and lessons of others are as absent as missing 
   const theirs = aScope(bench.db, aShop(bench.db), "owner");
   const theirCitation = findCitation(theirs, aCitation(theirs));
   const torque = { component: "drain plug", value: "65 ft-lb" };
-  const gone = (noun: string) => ({ ok: false, reason: "missing", noun });
   expect(post(bench, "torque", { ...torque, chapterId: otherChapter })).toEqual(gone("chapter"));
   expect(post(bench, "torque", { ...torque, chapterId: ulid() })).toEqual(gone("chapter"));
   expect(

@@ -1,9 +1,12 @@
+function pad(n: number): string {
+  return String(n).padStart(2, "0");
+}
+
 /** Milliseconds as a shop says them: 83500 → "1:23", 3_723_000 → "1:02:03". */
 export function formatTimecode(ms: number): string {
   const seconds = Math.max(0, Math.floor(ms / 1000));
   const h = Math.floor(seconds / 3600);
   const m = Math.floor(seconds / 60) % 60;
-  const pad = (n: number) => String(n).padStart(2, "0");
   return h > 0 ? `${h}:${pad(m)}:${pad(seconds % 60)}` : `${m}:${pad(seconds % 60)}`;
 }
 

@@ -27,10 +27,12 @@ export function listVehicles(scope: InShop): SnapshotVehicle[] {
     .all();
 }
 
+function sameYear(column: typeof vehicles.yearFrom | typeof vehicles.yearTo, value: number | null) {
+  return value === null ? isNull(column) : eq(column, value);
+}
+
 /** Adds a vehicle; one that the shop already has in every point is taken instead. */
 export function addVehicle(scope: InShop, vehicle: NewVehicle, now: number): VehicleId {
-  const year = (column: typeof vehicles.yearFrom | typeof vehicles.yearTo, value: number | null) =>
-    value === null ? isNull(column) : eq(column, value);
   const same = scope.db
     .select({ id: vehicles.id })
     .from(vehicles)
@@ -39,8 +41,8 @@ export function addVehicle(scope: InShop, vehicle: NewVehicle, now: number): Veh
         eq(vehicles.shopId, scope.shopId),
         eq(vehicles.make, vehicle.make),
         eq(vehicles.model, vehicle.model),
-        year(vehicles.yearFrom, vehicle.yearFrom),
-        year(vehicles.yearTo, vehicle.yearTo),
+        sameYear(vehicles.yearFrom, vehicle.yearFrom),
+        sameYear(vehicles.yearTo, vehicle.yearTo),
         eq(vehicles.engine, vehicle.engine),
         eq(vehicles.drive, vehicle.drive),
       ),

@@ -32,7 +32,7 @@ export function Lanes({ draft }: { draft: Draft }) {
   const placed = inRows(
     marks
       .map((mark) => ({ mark, from: Math.min(place(mark.recordingId, mark.atMs), 91) }))
-      .sort((a, b) => a.from - b.from),
+      .toSorted((a, b) => a.from - b.from),
     9.4,
   );
   const rows = Math.min(MOST_ROWS, Math.max(1, ...placed.map(({ row }) => row + 1)));

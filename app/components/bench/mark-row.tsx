@@ -1,3 +1,4 @@
+import { useRef } from "react";
 import { Form, href, useNavigation } from "react-router";
 import { Button, ButtonLink } from "~/components/ui/button";
 import type { Refusal } from "~/components/ui/field";
@@ -45,12 +46,24 @@ export function MarkRow({
   const title = markTitle(mark);
   const value = figure(mark);
   const wrong = refusal?.errors[""];
+  const erase = useRef<HTMLButtonElement>(null);
+  const eraseByKey = (event: React.KeyboardEvent) => {
+    if (!event.shiftKey || event.key !== "Delete") return;
+    event.preventDefault();
+    erase.current?.click();
+  };
   const act = (intent: "ink" | "erase", label: string, look: "ghost" | "quiet") => (
     <Form method="post" preventScrollReset>
       <input type="hidden" name="intent" value={intent} />
       <input type="hidden" name="markId" value={mark.id} />
       <input type="hidden" name="version" value={version} />
-      <Button look={look} disabled={sending} aria-label={`${label}: ${title}`}>
+      <Button
+        ref={intent === "erase" ? erase : null}
+        onKeyDown={eraseByKey}
+        look={look}
+        disabled={sending}
+        aria-label={`${label}: ${title}`}
+      >
         {label}
       </Button>
     </Form>
@@ -95,6 +108,7 @@ export function MarkRow({
           look={mark.state === "pencilled" ? "quiet" : "ghost"}
           to={href("/bench/lessons/:lessonId/marks/:markId", { lessonId, markId: mark.id })}
           aria-label={`Edit: ${title}`}
+          onKeyDown={eraseByKey}
         >
           Edit
         </ButtonLink>

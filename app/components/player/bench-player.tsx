@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from "react";
+import { useCallback, useEffect, useRef, useState } from "react";
 import { Button } from "~/components/ui/button";
 import { fileTime, lessonTime } from "~/lessons/lesson-time";
 import type { SnapshotClip } from "~/lessons/snapshot";
@@ -8,6 +8,11 @@ import { usePlayhead, useScripts } from "./moment";
 export type BenchClip = SnapshotClip & Readonly<{ id: string; title: string }>;
 /** A link to a recording's file for a few minutes; `expiresAt` in ms since 1970. */
 export type PlaybackLink = Readonly<{ url: string; expiresAt: number }>;
+
+/** A key that does something while the player has the focus; `run` gets the moment in lesson time. */
+export type PlayerKey = Readonly<{ key: string; words: string; run: (ms: number) => void }>;
+
+const NO_KEYS: readonly PlayerKey[] = [];
 
 const STEPS = [-5000, -1000, -100, 100, 1000, 5000] as const;
 
@@ -28,10 +33,12 @@ export function BenchPlayer({
   clips,
   links,
   startMs = 0,
+  keys = NO_KEYS,
 }: {
   clips: readonly BenchClip[];
   links: Readonly<Record<string, PlaybackLink>>;
   startMs?: number;
+  keys?: readonly PlayerKey[];
 }) {
   const start = fileTime(clips, startMs);
   const [recordingId, setRecordingId] = useState<string>(start?.recordingId ?? clips[0]?.recordingId ?? "");
@@ -63,28 +70,33 @@ export function BenchPlayer({
     return () => playhead?.hold(null);
   });
 
-  const renew = async () => {
-    if (video.current && video.current.currentTime > 0)
-      place.current = { seconds: video.current.currentTime, play: !video.current.paused };
+  const renew = useCallback(async () => {
+    const playing = video.current;
+    if (playing && playing.currentTime > 0)
+      place.current = { seconds: playing.currentTime, play: !playing.paused };
     const got = await fetchLink(recordingId).catch(() => null);
     if (got) setFresh((links) => ({ ...links, [recordingId]: got }));
     setProblem(got ? "" : "The recording cannot be reached. Look at the connection and press “Try again”.");
-  };
-  const renewing = useRef(renew);
-  renewing.current = renew;
+  }, [recordingId]);
 
   useEffect(() => {
     if (!recordingId) return;
-    if (!link) {
-      void renewing.current();
-      return;
-    }
-    const timer = setTimeout(
-      () => void renewing.current(),
-      Math.max(5000, (link.expiresAt - Date.now()) * 0.8),
-    );
+    const wait = link ? Math.max(5000, (link.expiresAt - Date.now()) * 0.8) : 0;
+    const timer = setTimeout(() => void renew(), wait);
     return () => clearTimeout(timer);
-  }, [recordingId, link]);
+  }, [recordingId, link, renew]);
+
+  // Single keys act only while the player has the focus, so that they never meet somebody who types.
+  const press = (event: React.KeyboardEvent) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    const ms = now() ?? shownMs;
+    const nudge = event.key === "[" ? -100 : event.key === "]" ? 100 : 0;
+    const found = keys.find(({ key }) => key === event.key.toLowerCase());
+    if (nudge !== 0) seek(ms + nudge);
+    else if (found) found.run(ms);
+    else return;
+    event.preventDefault();
+  };
 
   const failed = useRef(0);
   return (
@@ -96,6 +108,7 @@ export function BenchPlayer({
         controls
         playsInline
         preload="metadata"
+        onKeyDown={press}
         className="aspect-video max-h-[70dvh] w-full bg-graphite"
         onLoadedMetadata={(event) => {
           failed.current = 0;
@@ -136,6 +149,7 @@ export function BenchPlayer({
               <button
                 key={step}
                 type="button"
+                onKeyDown={press}
                 className="min-h-11 min-w-11 rounded border border-on-graphite-soft px-2 text-sm"
                 aria-label={`${step < 0 ? "Back" : "Forward"} ${Math.abs(step) / 1000} seconds`}
                 onClick={() => seek((now() ?? shownMs) + step)}
@@ -146,8 +160,18 @@ export function BenchPlayer({
             ))}
           </div>
         ) : null}
+        {keys.length > 0 && scripts ? (
+          <p className="hidden flex-wrap gap-x-4 gap-y-1 text-sm text-on-graphite-soft lg:flex">
+            <span>With the focus in the player:</span>
+            {[...keys, { key: "[ ]", words: "nudge 0.1 s" }].map(({ key, words }) => (
+              <span key={key}>
+                <kbd className="rounded border border-on-graphite-soft px-1.5 uppercase">{key}</kbd> {words}
+              </span>
+            ))}
+          </p>
+        ) : null}
         {clips.length > 1 && scripts ? (
-          <div className="flex flex-wrap gap-1" role="group" aria-label="Clips">
+          <fieldset className="flex flex-wrap gap-1" aria-label="Clips">
             {clips.map((clip, n) => (
               <button
                 key={clip.id}
@@ -159,7 +183,7 @@ export function BenchPlayer({
                 {n + 1}. {clip.title}
               </button>
             ))}
-          </div>
+          </fieldset>
         ) : null}
       </div>
     </section>

@@ -33,11 +33,7 @@ function todo(lesson: Route.ComponentProps["loaderData"]["lessons"][number]): st
 }
 
 export default function Bench({ loaderData: { lessons } }: Route.ComponentProps) {
-  const upload = (
-    <ButtonLink look={lessons.length > 0 ? "primary" : "ghost"} to="/bench/recordings">
-      Upload a recording
-    </ButtonLink>
-  );
+  const upload = <ButtonLink to="/bench/recordings">Upload a recording</ButtonLink>;
   const create = (
     <ButtonLink look="ghost" to={href("/bench/lessons/new")}>
       New lesson
@@ -48,10 +44,12 @@ export default function Bench({ loaderData: { lessons } }: Route.ComponentProps)
       title="Bench"
       under="Lessons in work and published."
       actions={
-        <>
-          {upload}
-          {create}
-        </>
+        lessons.length > 0 ? (
+          <>
+            {upload}
+            {create}
+          </>
+        ) : null
       }
     >
       {lessons.length === 0 ? (

@@ -1,4 +1,5 @@
-import { Form, href, redirect, useNavigation } from "react-router";
+import { useMemo } from "react";
+import { Form, href, redirect, useNavigate, useNavigation } from "react-router";
 import { ulid } from "ulid";
 import type { Scope } from "~/auth/scope.server";
 import { notFound, readId, requirePermission } from "~/auth/require.server";
@@ -6,7 +7,7 @@ import { ChapterCard, PHASE_CHOICES, type RefusalOf } from "~/components/bench/c
 import { Lanes } from "~/components/bench/lanes";
 import { LessonFields } from "~/components/bench/lesson-fields";
 import { MomentField } from "~/components/bench/moment-field";
-import { BenchPlayer } from "~/components/player/bench-player";
+import { BenchPlayer, type PlayerKey } from "~/components/player/bench-player";
 import { PlayheadProvider } from "~/components/player/moment";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { Field, FormProblem, Select } from "~/components/ui/field";
@@ -22,7 +23,7 @@ import { listErased } from "~/lessons/list-bench.server";
 import { loadDraft } from "~/lessons/load-draft.server";
 import { KIND_WORDS } from "~/lessons/mark-words";
 import { saveChapters } from "~/lessons/save-chapters.server";
-import { formatTimecode, readMoment } from "~/lessons/timecode";
+import { formatExactTimecode, formatTimecode, momentParam, readMoment } from "~/lessons/timecode";
 import { listVehicles } from "~/lessons/vehicles.server";
 import type { LessonId } from "#drizzle/schema/ids";
 import { refusedDraft, refusedForm } from "./answer-draft.server";
@@ -108,6 +109,32 @@ export default function BenchLesson({ loaderData, actionData }: Route.ComponentP
   };
   const adding = refusalOf("add-chapter");
   const details = refusalOf("details");
+  const navigate = useNavigate();
+  const keys = useMemo<PlayerKey[]>(() => {
+    const mark = (key: string, words: string, kind: string): PlayerKey => ({
+      key,
+      words,
+      run: (ms) =>
+        void navigate(
+          `${href("/bench/lessons/:lessonId/marks/new", { lessonId: lesson.id })}?kind=${kind}&at=${momentParam(ms)}`,
+        ),
+    });
+    const chapter: PlayerKey = {
+      key: "c",
+      words: "new chapter here",
+      run: (ms) => {
+        const start = document.querySelector<HTMLInputElement>("#add-chapter [name=start]");
+        if (start) start.value = formatExactTimecode(Math.round(ms / 10) * 10);
+        document.querySelector<HTMLInputElement>("#add-chapter [name=title]")?.focus();
+      },
+    };
+    return [
+      chapter,
+      mark("t", "torque", "torque"),
+      mark("s", "tool size", "tool"),
+      mark("w", "caution", "caution"),
+    ];
+  }, [navigate, lesson.id]);
   const address = (page: string) => `${href("/bench/lessons/:lessonId", { lessonId: lesson.id })}/${page}`;
   return (
     <PlayheadProvider>
@@ -136,11 +163,12 @@ export default function BenchLesson({ loaderData, actionData }: Route.ComponentP
         </div>
         <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,5fr)_minmax(0,6fr)]">
           <div className="grid gap-5 lg:sticky lg:top-4">
-            <BenchPlayer clips={clips} links={links} startMs={startMs} />
+            <BenchPlayer clips={clips} links={links} startMs={startMs} keys={keys} />
             <Sheet className="p-4">
               <h2 className="mb-3 text-2xl">Add a chapter</h2>
               <Form
                 method="post"
+                id="add-chapter"
                 preventScrollReset
                 className="grid items-start gap-3 sm:grid-cols-2"
                 key={chapters.length}
