@@ -51,6 +51,8 @@ export default [
     route("account", "routes/team/account.tsx"),
     route("team", "routes/team/team.tsx"),
     route("settings", "routes/team/settings.tsx"),
+    route("settings/tasks", "routes/team/tasks.tsx"),
+    route("settings/audit", "routes/team/audit.tsx"),
 
     // Answers for programs, not pages.
     ...prefix("api", [
