@@ -1,5 +1,5 @@
 import { Form, href, Link, useNavigation } from "react-router";
-import { BenchPlayer, type PlaybackLink } from "~/components/player/bench-player";
+import { BenchPlayer } from "~/components/player/bench-player";
 import { PlayheadProvider } from "~/components/player/moment";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { FormProblem, Select, type Refusal } from "~/components/ui/field";
@@ -24,7 +24,6 @@ export function MarkFormPage({
   title,
   fields,
   documents,
-  links,
   startMs,
   refusal,
   country,
@@ -38,7 +37,6 @@ export function MarkFormPage({
   title: string;
   fields: Readonly<Record<string, string>>;
   documents: readonly ShopDocument[];
-  links: Readonly<Record<string, PlaybackLink>>;
   startMs: number;
   refusal: Refusal;
   country: string;
@@ -72,7 +70,7 @@ export function MarkFormPage({
       >
         <div className="grid items-start gap-6 lg:grid-cols-2">
           <div className="grid gap-4 lg:sticky lg:top-4">
-            <BenchPlayer clips={clips} links={links} startMs={startMs} />
+            <BenchPlayer clips={clips} startMs={startMs} />
             {said ? (
               <Remark>
                 Read from the captions: <q>{said}</q>

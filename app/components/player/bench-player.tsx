@@ -4,10 +4,11 @@ import { fileTime, lessonTime } from "~/lessons/lesson-time";
 import type { SnapshotClip } from "~/lessons/snapshot";
 import { formatExactTimecode } from "~/lessons/timecode";
 import { usePlayhead, useScripts } from "./moment";
+import { playHref } from "./play-href";
 
 export type BenchClip = SnapshotClip & Readonly<{ id: string; title: string }>;
 /** A link to a recording's file for a few minutes; `expiresAt` in ms since 1970. */
-export type PlaybackLink = Readonly<{ url: string; expiresAt: number }>;
+type PlaybackLink = Readonly<{ url: string; expiresAt: number }>;
 
 /** A key that does something while the player has the focus; `run` gets the moment in lesson time. */
 export type PlayerKey = Readonly<{ key: string; words: string; run: (ms: number) => void }>;
@@ -27,29 +28,27 @@ async function fetchLink(recordingId: string): Promise<PlaybackLink | null> {
 
 /**
  * The player of the bench: one clip at a time, shown as it is, with the lesson's time under it.
- * `links` are those the page came with, by recording; they are renewed at four fifths of their life and on error.
+ * Links to the files are renewed at four fifths of their life and on error, and the place is kept.
  */
 export function BenchPlayer({
   clips,
-  links,
   startMs = 0,
   keys = NO_KEYS,
 }: {
   clips: readonly BenchClip[];
-  links: Readonly<Record<string, PlaybackLink>>;
   startMs?: number;
   keys?: readonly PlayerKey[];
 }) {
   const start = fileTime(clips, startMs);
   const [recordingId, setRecordingId] = useState<string>(start?.recordingId ?? clips[0]?.recordingId ?? "");
-  const [fresh, setFresh] = useState<Readonly<Record<string, PlaybackLink>>>({});
+  const [links, setLinks] = useState<Readonly<Record<string, PlaybackLink>>>({});
   const [problem, setProblem] = useState("");
   const [shownMs, setShownMs] = useState(startMs);
   const video = useRef<HTMLVideoElement>(null);
   const place = useRef({ seconds: (start?.fileMs ?? 0) / 1000, play: false });
   const playhead = usePlayhead();
   const scripts = useScripts();
-  const link = fresh[recordingId] ?? links[recordingId];
+  const link = links[recordingId];
 
   const now = () => {
     const seconds = video.current?.currentTime;
@@ -75,7 +74,7 @@ export function BenchPlayer({
     if (playing && playing.currentTime > 0)
       place.current = { seconds: playing.currentTime, play: !playing.paused };
     const got = await fetchLink(recordingId).catch(() => null);
-    if (got) setFresh((links) => ({ ...links, [recordingId]: got }));
+    if (got) setLinks((links) => ({ ...links, [recordingId]: got }));
     setProblem(got ? "" : "The recording cannot be reached. Look at the connection and press “Try again”.");
   }, [recordingId]);
 
@@ -104,7 +103,8 @@ export function BenchPlayer({
       <video
         key={recordingId}
         ref={video}
-        src={link?.url}
+        // Without scripts the address checks the rights and leads on to the file.
+        src={link?.url ?? (scripts ? undefined : playHref(clips, startMs))}
         controls
         playsInline
         preload="metadata"

@@ -27,14 +27,13 @@ import { formatExactTimecode, formatTimecode, momentParam, readMoment } from "~/
 import { listVehicles } from "~/lessons/vehicles.server";
 import type { LessonId } from "#drizzle/schema/ids";
 import { refusedDraft, refusedForm } from "./answer-draft.server";
-import { playbackLinks } from "./playback-links.server";
 import type { Route } from "./+types/lesson";
 
 export function meta({ loaderData }: Route.MetaArgs) {
   return [{ title: `${loaderData?.draft.lesson.title ?? "Lesson"}, bench, Castlenut` }];
 }
 
-export async function loader({ params, request, context }: Route.LoaderArgs) {
+export function loader({ params, request, context }: Route.LoaderArgs) {
   const scope = context.get(scopeContext);
   requirePermission(scope, "lesson:edit");
   const draft = loadDraft(scope, readId<"lesson">(params.lessonId, "lesson")) ?? notFound("lesson");
@@ -42,7 +41,6 @@ export async function loader({ params, request, context }: Route.LoaderArgs) {
     draft,
     erased: listErased(scope, draft.lesson.id),
     vehicles: listVehicles(scope),
-    links: await playbackLinks(scope, draft.clips, Date.now()),
     startMs: readMoment(new URL(request.url).searchParams),
     newChapterId: ulid(),
   };
@@ -99,7 +97,7 @@ function summary({ lesson, marks }: Draft): string {
 }
 
 export default function BenchLesson({ loaderData, actionData }: Route.ComponentProps) {
-  const { draft, erased, vehicles, links, startMs, newChapterId } = loaderData;
+  const { draft, erased, vehicles, startMs, newChapterId } = loaderData;
   const { lesson, clips, chapters } = draft;
   const sending = useNavigation().state !== "idle";
   const refusalOf: RefusalOf = (intent, id = "") => {
@@ -163,7 +161,7 @@ export default function BenchLesson({ loaderData, actionData }: Route.ComponentP
         </div>
         <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,5fr)_minmax(0,6fr)]">
           <div className="grid gap-5 lg:sticky lg:top-4">
-            <BenchPlayer clips={clips} links={links} startMs={startMs} keys={keys} />
+            <BenchPlayer clips={clips} startMs={startMs} keys={keys} />
             <Sheet className="p-4">
               <h2 className="mb-3 text-2xl">Add a chapter</h2>
               <Form

@@ -17,7 +17,6 @@ import { safetyReason } from "~/lessons/safety-critical";
 import { saveMark } from "~/lessons/save-mark.server";
 import type { MarkId } from "#drizzle/schema/ids";
 import { refusedDraft, refusedForm } from "./answer-draft.server";
-import { playbackLinks } from "./playback-links.server";
 import type { Route } from "./+types/mark-new";
 
 const Kind = z.enum(Object.keys(KIND_WORDS) as [MarkKind, ...MarkKind[]]);
@@ -27,7 +26,7 @@ export function meta() {
   return [{ title: "New mark, Castlenut" }];
 }
 
-export async function loader({ params, request, context }: Route.LoaderArgs) {
+export function loader({ params, request, context }: Route.LoaderArgs) {
   const scope = context.get(scopeContext);
   requirePermission(scope, "lesson:edit");
   const draft = loadDraft(scope, readId<"lesson">(params.lessonId, "lesson")) ?? notFound("lesson");
@@ -47,7 +46,6 @@ export async function loader({ params, request, context }: Route.LoaderArgs) {
     fields: newMarkFields(draft, { atMs, chapterId }, localDateOf(now, timeZone)),
     documents: listDocuments(scope),
     safetyReason: safetyReason(draft.lesson.system, kind),
-    links: await playbackLinks(scope, draft.clips, now),
     newId: ulid(),
   };
 }

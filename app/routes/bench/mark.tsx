@@ -13,7 +13,6 @@ import { safetyReason } from "~/lessons/safety-critical";
 import { saveMark } from "~/lessons/save-mark.server";
 import type { Scope } from "~/auth/scope.server";
 import { refusedDraft, refusedForm } from "./answer-draft.server";
-import { playbackLinks } from "./playback-links.server";
 import type { Route } from "./+types/mark";
 
 export function meta() {
@@ -26,7 +25,7 @@ function find(scope: Scope, params: Route.LoaderArgs["params"]) {
   return { draft, mark: draft.marks.find((mark) => mark.id === markId) ?? notFound("value") };
 }
 
-export async function loader({ params, context }: Route.LoaderArgs) {
+export function loader({ params, context }: Route.LoaderArgs) {
   const scope = context.get(scopeContext);
   requirePermission(scope, "lesson:edit");
   const { draft, mark } = find(scope, params);
@@ -40,7 +39,6 @@ export async function loader({ params, context }: Route.LoaderArgs) {
     fields: editMarkFields(draft, mark, cited, localDateOf(now, timeZone)),
     documents: listDocuments(scope),
     safetyReason: safetyReason(draft.lesson.system, mark.kind),
-    links: await playbackLinks(scope, draft.clips, now),
   };
 }
 
