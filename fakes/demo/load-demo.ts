@@ -15,7 +15,7 @@ import { loadDraft } from "~/lessons/load-draft.server";
 import { saveChapters } from "~/lessons/save-chapters.server";
 import { saveMark } from "~/lessons/save-mark.server";
 import type { Phase } from "~/lessons/mark";
-import { checkMark } from "~/publishing/check-mark.server";
+import { checkMark, marksForCheck } from "~/publishing/check-mark.server";
 import { publishLesson } from "~/publishing/publish-lesson.server";
 import { objectStorage } from "~/recordings/object-storage.server";
 import { recordingKey } from "~/recordings/object-key";
@@ -306,11 +306,21 @@ async function addLesson(
     must(saveMark(author, lessonId, { markId, isNew: true }, entry.value, at), `${lesson.job} at ${mark.at}`);
     const holdsFigure =
       mark.kind === "torque" || mark.kind === "measure" || (mark.kind === "tool" && mark.size);
-    if (checker && holdsFigure && !mark.unchecked)
+    if (checker && holdsFigure && !mark.unchecked) {
+      const row = marksForCheck(checker, lessonId)?.rows.find((row) => row.mark.id === markId);
+      const { seal } = must(row, `${lesson.job} at ${mark.at} is not for check`);
       must(
-        checkMark(checker, lessonId, markId, { outcome: "confirmed", reason: "" }, at + 3_600_000),
+        checkMark(
+          checker,
+          lessonId,
+          markId,
+          { outcome: "confirmed", reason: "", seal },
+          env().PUBLIC_ORIGIN,
+          at + 3_600_000,
+        ),
         `check at ${mark.at}`,
       );
+    }
   }
   if (lesson.publishedDaysAgo !== null) {
     const published = publishLesson(

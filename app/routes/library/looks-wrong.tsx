@@ -114,7 +114,7 @@ export default function LooksWrong({ loaderData, actionData }: Route.ComponentPr
                   look="ghost"
                   name="reason"
                   value={reason}
-                  className="min-h-15 w-full justify-start text-left text-base"
+                  className="min-h-15 w-full justify-start text-left text-base!"
                 >
                   {DOUBT_REASONS[reason]}
                 </Button>
