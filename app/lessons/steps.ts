@@ -141,7 +141,7 @@ export function stepAt(steps: readonly Pick<Step, "startMs">[], lessonMs: number
 
 /** How long a lesson is, in words: 1120000 → "18 min 40 s". */
 export function lengthWords(ms: number): string {
-  const seconds = Math.round(ms / 1000);
+  const seconds = Math.floor(ms / 1000);
   const [h, m, s] = [Math.floor(seconds / 3600), Math.floor(seconds / 60) % 60, seconds % 60];
   const parts = [h > 0 ? `${h} h` : "", m > 0 ? `${m} min` : "", s > 0 && h === 0 ? `${s} s` : ""].filter(
     Boolean,

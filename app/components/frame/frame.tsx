@@ -60,7 +60,7 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
           <Link to={href("/")} className="no-underline" aria-label="Castlenut, library">
             <Brand />
           </Link>
-          <div className="order-2 w-full lg:order-none lg:w-auto lg:min-w-60 lg:flex-1">
+          <div className="order-2 w-full lg:order-none lg:w-auto lg:min-w-60 lg:max-w-2xl lg:flex-1">
             <SearchBox />
           </div>
           <div className="ml-auto flex items-center gap-3 xl:order-4 xl:ml-0">
@@ -75,7 +75,7 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
           </div>
           <nav
             aria-label="Places"
-            className="order-3 -mx-2 flex w-full gap-1 overflow-x-auto xl:order-3 xl:mx-0 xl:w-auto"
+            className="order-3 -mx-2 flex w-full gap-1 overflow-x-auto xl:order-3 xl:mx-0 xl:ml-auto xl:w-auto"
           >
             {places.map((place) => (
               <NavLink

@@ -26,7 +26,7 @@ export function ArrivingPlate({ marks, view }: { marks: readonly TimedMark[]; vi
   const timed = marks[index];
   if (!timed) return null;
   const { mark, showing } = timed.mark;
-  const place = "plate-arrives absolute top-2 right-2 z-10 max-w-[min(20rem,72%)]";
+  const place = "plate-arrives arriving";
   if (mark.kind === "caution")
     return (
       <div key={mark.id} className={place}>

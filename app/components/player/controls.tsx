@@ -58,17 +58,26 @@ export function Controls({
   const all = formatTimecode(durationMs);
   return (
     <div className="bg-graphite px-2 text-on-graphite">
-      <input
-        type="range"
-        aria-label="Moment in the lesson"
-        aria-valuetext={`${now} of ${all}`}
-        min={0}
-        max={Math.ceil(durationMs / 1000)}
-        step={1}
-        value={second}
-        onChange={(event) => jump({ toMs: Number(event.target.value) * 1000, play: store.get().playing })}
-        className="moment-slider block h-6 w-full"
-      />
+      <div className="flex items-center gap-3 pt-1 pl-1">
+        <input
+          type="range"
+          aria-label="Moment in the lesson"
+          aria-valuetext={`${now} of ${all}`}
+          min={0}
+          max={Math.ceil(durationMs / 1000)}
+          step={1}
+          value={second}
+          onChange={(event) => jump({ toMs: Number(event.target.value) * 1000, play: store.get().playing })}
+          className="moment-slider block h-8 min-w-0 flex-1"
+        />
+        <span className="text-sm tabular-nums">
+          {now} / {all}
+        </span>
+        <button type="button" className={`${BUTTON} lg:hidden`} onClick={() => store.close()}>
+          <Shape path="M4.500 3 10 8.500 15.500 3 17 4.500 11.500 10 17 15.500 15.500 17 10 11.500 4.500 17 3 15.500 8.500 10 3 4.500z" />
+          <span className="sr-only">Put the picture away</span>
+        </button>
+      </div>
       <div className="flex flex-wrap items-center gap-x-0.5">
         <button type="button" className={BUTTON} onClick={() => engineRef.current?.toggle()}>
           <Shape path={playing ? "M4 3h4v14H4zM12 3h4v14h-4z" : "M4 2.500 17 10 4 17.500z"} />
@@ -84,9 +93,6 @@ export function Controls({
           <span aria-hidden="true">−10 s</span>
           <span className="sr-only">Back ten seconds</span>
         </button>
-        <span className="px-2 text-sm tabular-nums">
-          {now} / {all}
-        </span>
         <span className="ml-auto flex items-center">
           <label className="inline-flex min-h-11 items-center text-sm">
             <span className="sr-only">Speed</span>

@@ -17,17 +17,16 @@ const STEP_MS = 5_000;
 function Start({
   lesson,
   poster,
-  startMs,
   continueMs,
   length,
 }: {
   lesson: PlayedLesson;
   poster: string | null;
-  startMs: number;
   continueMs: number | null;
   length: string;
 }) {
   const jump = useJump();
+  const momentMs = usePlayer((state) => state.momentMs);
   const start = (toMs: number, words: string, look: string) => (
     <a
       href={playHref(lesson.clips, toMs)}
@@ -54,15 +53,15 @@ function Start({
         />
       )}
       <div className="relative flex flex-wrap items-center gap-2 py-1.5 pr-2 lg:justify-center">
-        {continueMs !== null ? (
+        {momentMs === 0 && continueMs !== null ? (
           <>
             {start(continueMs, `Continue from ${formatTimecode(continueMs)}`, first)}
-            {start(0, "From the start", "border border-on-graphite-soft bg-graphite text-on-graphite")}
+            {start(0, "From 0:00", "border border-on-graphite-soft bg-graphite text-on-graphite")}
           </>
-        ) : startMs > 0 ? (
+        ) : momentMs > 0 ? (
           <>
-            {start(startMs, `Play from ${formatTimecode(startMs)}`, first)}
-            {start(0, "From the start", "border border-on-graphite-soft bg-graphite text-on-graphite")}
+            {start(momentMs, `Play from ${formatTimecode(momentMs)}`, first)}
+            {start(0, "From 0:00", "border border-on-graphite-soft bg-graphite text-on-graphite")}
           </>
         ) : (
           start(0, `Play, ${length}`, first)
@@ -117,7 +116,6 @@ export function LessonPlayer({
   marks,
   view,
   poster,
-  startMs,
   continueMs,
   durationMs,
   length,
@@ -127,7 +125,6 @@ export function LessonPlayer({
   marks: readonly TimedMark[];
   view: PlateView;
   poster: string | null;
-  startMs: number;
   continueMs: number | null;
   durationMs: number;
   length: string;
@@ -161,7 +158,7 @@ export function LessonPlayer({
         ref={frame}
         aria-label="Recording"
         onKeyDown={onKeyDown}
-        className="player no-print z-20 min-w-0 overflow-hidden bg-graphite text-on-graphite max-lg:sticky max-lg:bottom-0 max-lg:-mx-4 lg:rounded-md"
+        className="player no-print z-20 min-w-0 bg-graphite text-on-graphite max-lg:sticky max-lg:bottom-0 max-lg:-mx-4 lg:overflow-hidden lg:rounded-md"
       >
         <MarkLane marks={marks} durationMs={durationMs} />
         <div className={`relative ${shown ? "player-screen" : "lg:aspect-video"}`}>
@@ -184,13 +181,7 @@ export function LessonPlayer({
               ) : null}
             </div>
           ) : (
-            <Start
-              lesson={lesson}
-              poster={poster}
-              startMs={startMs}
-              continueMs={continueMs}
-              length={length}
-            />
+            <Start lesson={lesson} poster={poster} continueMs={continueMs} length={length} />
           )}
           {shown ? <ArrivingPlate marks={marks} view={view} /> : null}
           <Problem />
@@ -203,10 +194,14 @@ export function LessonPlayer({
             hasCaptions={lesson.captionTracks.length > 0}
           />
         ) : null}
-        <div className={shown ? "" : "max-lg:hidden"}>
+        <div className="player-rail">
           <ChapterRail steps={steps} durationMs={durationMs} />
         </div>
       </section>
+      {/* On a phone the docked picture leaves its place to the values; the rail stands below the sheet. */}
+      <div className="no-print min-w-0 overflow-hidden rounded-md lg:hidden">
+        <ChapterRail steps={steps} durationMs={durationMs} />
+      </div>
       <NowPlaying steps={steps} />
     </>
   );

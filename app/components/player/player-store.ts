@@ -63,6 +63,11 @@ export class PlayerStore {
     return waiting;
   }
 
+  /** Puts the picture away; the moment stays. */
+  close(): void {
+    this.set({ phase: "idle", playing: false, problem: null });
+  }
+
   disconnect(): void {
     this.#onJump = null;
   }

@@ -5,7 +5,7 @@ import { LessonPlayer } from "~/components/player/lesson-player";
 import type { TimedMark } from "~/components/player/mark-lane";
 import { PlayerProvider } from "~/components/player/player-context";
 import { SaidList } from "~/components/player/said-list";
-import { CastleNut, nutWords } from "~/components/plates/castle-nut";
+import { CastleNut } from "~/components/plates/castle-nut";
 import { momentDay } from "~/components/plates/plate-words";
 import { sheetWords, StepSheet } from "~/components/step-sheet/step-sheet";
 import { ButtonLink } from "~/components/ui/button";
@@ -20,6 +20,7 @@ import { readMoment } from "~/lessons/timecode";
 import { vehiclesWords } from "~/lessons/vehicle-words";
 import { loadSkills } from "~/training/load-skills.server";
 import { whereLeft } from "~/training/record-watched.server";
+import { progressWords } from "~/training/progress-words";
 import { NO_SKILL } from "~/training/skill-state";
 import type { Route } from "./+types/lesson";
 
@@ -108,10 +109,10 @@ export default function Lesson({ loaderData }: Route.ComponentProps) {
             <Sheet className="overflow-clip">
               <header className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 px-4 py-3 sm:px-6">
                 <h2 className="text-2xl">Step sheet</h2>
-                <p className="text-sm text-ink-soft">{sheetWords(steps, marks)}</p>
+                <p className="text-sm text-ink-soft max-sm:hidden">{sheetWords(steps, marks)}</p>
                 <p className="flex items-center gap-2 text-sm text-ink-soft">
                   <CastleNut state={skill} size={30} />
-                  <span aria-hidden="true">{nutWords(skill)}</span>
+                  <span aria-hidden="true">{progressWords(skill)}</span>
                 </p>
               </header>
               {snapshot.summary === "" ? null : <p className="px-4 pb-3 sm:px-6">{snapshot.summary}</p>}
@@ -135,7 +136,6 @@ export default function Lesson({ loaderData }: Route.ComponentProps) {
               marks={timed}
               view={viewer}
               poster={first === undefined ? null : `/recordings/${first}/poster`}
-              startMs={startMs}
               continueMs={continueMs}
               durationMs={durationMs}
               length={length}

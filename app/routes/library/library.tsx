@@ -1,7 +1,7 @@
 import { Form, href, Link } from "react-router";
 import { can } from "~/auth/permissions";
 import { requirePermission } from "~/auth/require.server";
-import { CastleNut, nutWords } from "~/components/plates/castle-nut";
+import { CastleNut } from "~/components/plates/castle-nut";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { Select } from "~/components/ui/field";
 import { EmptyState, Page } from "~/components/ui/page";
@@ -12,6 +12,7 @@ import { SYSTEM_WORDS } from "~/lessons/mark-words";
 import { lengthWords } from "~/lessons/steps";
 import { vehiclesWords } from "~/lessons/vehicle-words";
 import { loadSkills } from "~/training/load-skills.server";
+import { progressWords } from "~/training/progress-words";
 import { NO_SKILL } from "~/training/skill-state";
 import type { Route } from "./+types/library";
 
@@ -104,7 +105,7 @@ function LessonCard({ lesson }: { lesson: Data["shown"][number] }) {
             </p>
             <p className="text-sm">
               <span className="sr-only">You: </span>
-              {nutWords(lesson.skill)}
+              {progressWords(lesson.skill)}
             </p>
           </div>
           <span aria-hidden="true" className="shrink-0">
@@ -119,7 +120,7 @@ function LessonCard({ lesson }: { lesson: Data["shown"][number] }) {
 function Filters({ wanted, choices }: Pick<Data, "wanted" | "choices">) {
   const active = wanted.system !== "" || wanted.vehicle !== "" || wanted.q !== "";
   return (
-    <Form className="mb-6 grid items-end gap-3 sm:grid-cols-[1fr_1fr_1fr_auto]">
+    <Form className="mb-6 grid grid-cols-2 items-end gap-3 sm:grid-cols-[1fr_1fr_1fr_auto]">
       <Select
         label="System"
         name="system"
