@@ -71,6 +71,9 @@ test("rubber-bushed joints are known by any of their names", () => {
   expect(isBushedJoint("Lower wishbone pivot bolt")).toBe(true);
   expect(isBushedJoint("damper lower bolt")).toBe(true);
   expect(isBushedJoint("lug nut")).toBe(false);
+  expect(isBushedJoint("Lower control arm ball joint nut")).toBe(false);
+  expect(isBushedJoint("Trailing arm to hub carrier bolt")).toBe(false);
+  expect(isBushedJoint("Strut to knuckle bolts")).toBe(false);
 });
 
 test("every other name can be listed for search", () => {

@@ -118,9 +118,13 @@ export function componentsIn(words: string): Component[] {
   return [...new Set(read(words).components)];
 }
 
+/** Joints without rubber: an arm's ball joint, or a bolt into the knuckle, is not twisted by the height. */
+const RIGID = new Set(["ball-joint", "knuckle", "wheel-hub", "wheel-bearing"]);
+
 /** True when these words name a rubber-bushed suspension joint: the height at which it is tightened must be known. */
 export function isBushedJoint(words: string): boolean {
-  return componentsIn(words).some((component) => component.bushed);
+  const named = componentsIn(words);
+  return named.some((component) => component.bushed) && !named.some((component) => RIGID.has(component.key));
 }
 
 /** Every other name of the components in these words, for search: "drop link" also finds "sway bar link". */

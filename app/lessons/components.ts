@@ -94,6 +94,8 @@ export const COMPONENTS: readonly Component[] = [
     "coil-spring": ["coil spring", "road spring"],
     "spring-seat": ["spring seat", "spring pad", "spring isolator"],
     "strut-mount": ["strut mount", "top mount", "strut top mount", "upper strut mount", "strut bearing"],
+    // Bolted rigid to the knuckle; only its top turns in rubber.
+    strut: ["strut", "strut assembly", "macpherson strut", "suspension strut"],
     "bump-stop": ["bump stop", "jounce bumper", "jounce stop"],
     "air-spring": ["air spring", "air bag spring", "air suspension bag"],
     "torsion-bar": ["torsion bar"],
@@ -123,7 +125,6 @@ export const COMPONENTS: readonly Component[] = [
       "lateral-link": ["lateral link", "lateral arm", "camber arm", "toe link", "toe arm"],
       "panhard-rod": ["panhard rod", "panhard bar", "track bar"],
       "shock-absorber": ["shock absorber", "shock", "damper"],
-      strut: ["strut", "strut assembly", "macpherson strut", "suspension strut"],
       "leaf-spring": ["leaf spring"],
       "spring-shackle": ["spring shackle", "shackle"],
       "axle-beam": ["axle beam", "twist beam", "torsion beam", "rear axle beam"],
