@@ -84,7 +84,14 @@ function EditChapter({
     </>
   );
   return (
-    <details open={refusal !== undefined || whole !== undefined || chapter.phase === null}>
+    <details
+      open={
+        refusal !== undefined ||
+        whole !== undefined ||
+        chapter.phase === null ||
+        chapter.state === "pencilled"
+      }
+    >
       <summary className="flex min-h-11 cursor-pointer items-center text-sm font-semibold text-enamel-text">
         Change this chapter
       </summary>

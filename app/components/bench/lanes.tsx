@@ -61,7 +61,7 @@ export function Lanes({ draft }: { draft: Draft }) {
                 <a
                   href={`?t=${momentParam(ms)}#chapter-${chapter.id}`}
                   onClick={go(ms)}
-                  className={`flex h-full items-center overflow-hidden rounded-sm border px-2 text-sm whitespace-nowrap text-on-graphite no-underline ${chapter.state === "pencilled" || chapter.phase === null ? "border-dashed border-on-graphite-soft" : "border-enamel bg-enamel"}`}
+                  className={`flex h-full items-center overflow-hidden rounded-sm border px-2 text-sm whitespace-nowrap no-underline ${chapter.state === "pencilled" || chapter.phase === null ? "border-dashed border-on-graphite-soft text-on-graphite" : "border-enamel bg-enamel text-on-enamel"}`}
                   title={`${n + 1}. ${chapter.title}, from ${formatTimecode(ms)}`}
                 >
                   <span className="truncate">{chapter.title}</span>
