@@ -33,7 +33,7 @@ function todo(lesson: Route.ComponentProps["loaderData"]["lessons"][number]): st
 }
 
 export default function Bench({ loaderData: { lessons } }: Route.ComponentProps) {
-  const upload = <ButtonLink to="/bench/recordings">Upload a recording</ButtonLink>;
+  const upload = <ButtonLink to={href("/bench/recordings/upload")}>Upload a recording</ButtonLink>;
   const create = (
     <ButtonLink look="ghost" to={href("/bench/lessons/new")}>
       New lesson
@@ -55,7 +55,7 @@ export default function Bench({ loaderData: { lessons } }: Route.ComponentProps)
       {lessons.length === 0 ? (
         <EmptyState title="No lesson yet">
           <p>Film a job, upload the recording, then make a lesson of it: chapters, values, sources.</p>
-          <ButtonLink to="/bench/recordings">Upload the first recording</ButtonLink>
+          <ButtonLink to={href("/bench/recordings/upload")}>Upload the first recording</ButtonLink>
         </EmptyState>
       ) : (
         <Sheet>

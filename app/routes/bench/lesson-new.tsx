@@ -53,7 +53,7 @@ export default function NewLesson({ loaderData, actionData: refusal }: Route.Com
             A lesson is made of one or more recordings. Upload one, or wait until the last upload has been
             looked through.
           </p>
-          <ButtonLink to="/bench/recordings">Upload a recording</ButtonLink>
+          <ButtonLink to={href("/bench/recordings/upload")}>Upload a recording</ButtonLink>
         </EmptyState>
       </Page>
     );
