@@ -33,6 +33,8 @@ export class PlaybackEngine {
   #link: Link | null = null;
   #fresh: Link | null = null;
   #loading = 0;
+  /** The player stands where it was sent; before that its time says nothing. */
+  #settled = false;
   #tries = 0;
   #seam: ReturnType<typeof setTimeout> | undefined;
   #renew: ReturnType<typeof setTimeout> | undefined;
@@ -128,6 +130,7 @@ export class PlaybackEngine {
   /** Puts a recording into the player at a moment; false when another load overtook it or it does not play. */
   async #load(recordingId: string, fileMs: number): Promise<boolean> {
     const mine = ++this.#loading;
+    this.#settled = false;
     const { player, store } = this;
     if (store.get().phase === "idle") store.set({ phase: "loading" });
     const other = this.#link?.recordingId !== recordingId;
@@ -151,6 +154,7 @@ export class PlaybackEngine {
     if (player.error() !== null) return false;
     player.currentTime(fileMs / 1000);
     player.playbackRate(store.get().rate);
+    this.#settled = true;
     store.set({ phase: "ready", problem: null });
     return true;
   }
@@ -253,7 +257,7 @@ export class PlaybackEngine {
   #tick(): void {
     const { player, store } = this;
     const piece = this.#pieces[this.#index];
-    if (!piece || store.get().phase !== "ready" || this.#link?.recordingId !== piece.recordingId) return;
+    if (!piece || !this.#settled || this.#link?.recordingId !== piece.recordingId) return;
     const fileMs = (player.currentTime() ?? 0) * 1000;
     if (player.seeking()) return;
     const playing = !player.paused();
