@@ -6,7 +6,7 @@ import { S3Error } from "./s3-error";
  * Trailing headers are handed to `onTrailer`.
  */
 export function unchunk(onTrailer: (name: string, value: string) => void): Transform {
-  let held = Buffer.alloc(0);
+  let held: Buffer = Buffer.alloc(0);
   let left = 0;
   let state: "size" | "data" | "after-data" | "trailers" = "size";
   const takeLine = (): string | null => {

@@ -62,7 +62,7 @@ export async function startFakeSmtp(options: {
             from: mail.from?.text ?? "",
             subject: mail.subject ?? "",
             text: mail.text ?? "",
-            html: mail.html === false ? "" : mail.html,
+            html: mail.html || "",
             date: new Date().toISOString(),
             messageId: mail.messageId ?? "",
           };

@@ -13,9 +13,13 @@ export async function loader() {
     down.push("database");
   }
   try {
-    await objectStorage().send(new HeadBucketCommand({ Bucket: env().S3_BUCKET }), { abortSignal: AbortSignal.timeout(3000) });
+    await objectStorage().send(new HeadBucketCommand({ Bucket: env().S3_BUCKET }), {
+      abortSignal: AbortSignal.timeout(3000),
+    });
   } catch {
     down.push("object storage");
   }
-  return Response.json(down.length === 0 ? { ok: true } : { ok: false, down }, { status: down.length === 0 ? 200 : 503 });
+  return Response.json(down.length === 0 ? { ok: true } : { ok: false, down }, {
+    status: down.length === 0 ? 200 : 503,
+  });
 }

@@ -5,7 +5,13 @@ import { scopeContext } from "~/context";
 import { parseForm } from "~/forms/parse-form";
 import type { Route } from "./+types/units";
 
-const Units = z.object({ units: z.enum(["metric", "inch"]), to: z.string().regex(/^\/(?!\/)/).catch("/") });
+const Units = z.object({
+  units: z.enum(["metric", "inch"]),
+  to: z
+    .string()
+    .regex(/^\/(?!\/)/)
+    .catch("/"),
+});
 
 /** The switch in the frame: which unit comes first for this person. */
 export async function action({ request, context }: Route.ActionArgs) {

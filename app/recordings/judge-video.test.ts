@@ -1,0 +1,32 @@
+import { expect, test } from "vitest";
+import { judgeVideo, type Probe } from "./judge-video";
+
+const phone: Probe = {
+  container: "mp4",
+  videoCodec: "avc",
+  audioCodec: "aac",
+  width: 1280,
+  height: 720,
+  rotation: 0,
+  durationMs: 60_000,
+};
+
+test("H.264 with AAC plays from MP4 and MOV, VP9 with Opus from WebM, also without sound", () => {
+  expect(judgeVideo(phone)).toEqual({ plays: true });
+  expect(judgeVideo({ ...phone, container: "mov", audioCodec: null })).toEqual({ plays: true });
+  expect(judgeVideo({ ...phone, container: "webm", videoCodec: "vp9", audioCodec: "opus" })).toEqual({
+    plays: true,
+  });
+});
+
+test("HEVC and mixtures are converted", () => {
+  expect(judgeVideo({ ...phone, videoCodec: "hevc" })).toMatchObject({ plays: false, convert: true });
+  expect(judgeVideo({ ...phone, container: "mkv" })).toMatchObject({ convert: true });
+  expect(judgeVideo({ ...phone, container: "webm" })).toMatchObject({ convert: true });
+});
+
+test("no picture, no length and too long are refused", () => {
+  expect(judgeVideo({ ...phone, videoCodec: null })).toMatchObject({ convert: false });
+  expect(judgeVideo({ ...phone, durationMs: 0 })).toMatchObject({ convert: false });
+  expect(judgeVideo({ ...phone, durationMs: 5 * 3_600_000 })).toMatchObject({ convert: false });
+});
