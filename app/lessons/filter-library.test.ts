@@ -19,9 +19,10 @@ const LESSONS = [
   { title: "Using a click wrench", summary: "Torque", system: "workshop", position: "", vehicles: [] },
 ] as const;
 
+const titles = (wanted: Partial<{ system: string; vehicle: string; q: string }>) =>
+  filterLibrary(LESSONS, { system: "", vehicle: "", q: "", ...wanted }).map(({ title }) => title);
+
 test("system, vehicle and words narrow the library; a technique fits every vehicle", () => {
-  const titles = (wanted: Partial<{ system: string; vehicle: string; q: string }>) =>
-    filterLibrary(LESSONS, { system: "", vehicle: "", q: "", ...wanted }).map(({ title }) => title);
   expect(titles({})).toHaveLength(2);
   expect(titles({ system: "workshop" })).toEqual(["Using a click wrench"]);
   expect(titles({ vehicle: "foss" })).toHaveLength(2);

@@ -40,6 +40,6 @@ export function libraryChoices(lessons: readonly Listed[]): {
     ),
     vehicles: [...vehicles]
       .map(([value, label]) => ({ value, label }))
-      .sort((a, b) => a.label.localeCompare(b.label, "en")),
+      .toSorted((a, b) => a.label.localeCompare(b.label, "en")),
   };
 }

@@ -24,5 +24,5 @@ export function saidLines(
       return [{ atMs, endMs: atMs + Math.max(0, cue.endMs - cue.startMs), text }];
     }),
   );
-  return lines.sort((a, b) => a.atMs - b.atMs);
+  return lines.toSorted((a, b) => a.atMs - b.atMs);
 }

@@ -79,13 +79,14 @@ test("steps stand in the order in which the clips play, in lesson time, without 
   expect([0, 19_999, 20_000, 45_000, 99_000].map((ms) => stepAt(steps, ms))).toEqual([0, 0, 1, 2, 2]);
 });
 
+const variant = (id: string, which: string, given: Partial<Mark> = {}) =>
+  mark(id, "one", 0, {
+    component: "Lower nut",
+    applies: { yearFrom: null, yearTo: null, engine: "", drive: "", variant: which, question: "" },
+    ...given,
+  });
+
 test("only what differs in what it applies to is a variant", () => {
-  const variant = (id: string, which: string, given: Partial<Mark> = {}) =>
-    mark(id, "one", 0, {
-      component: "Lower nut",
-      applies: { yearFrom: null, yearTo: null, engine: "", drive: "", variant: which, question: "" },
-      ...given,
-    });
   const [pair] = groupVariants([variant("a", "flanged nut"), variant("b", "plain nut")]);
   expect(pair).toMatchObject({ question: "Which of these is on the car?" });
   // Said twice in one lesson, and left and right, are no variants.

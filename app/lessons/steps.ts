@@ -100,17 +100,17 @@ export function stepsOf(
   const shown = snapshot.chapters
     .map((chapter) => ({ chapter, span: chapterSpan(clips, chapter) }))
     .flatMap(({ chapter, span }) => (span ? [{ chapter, ...span }] : []))
-    .sort((a, b) => a.startMs - b.startMs);
+    .toSorted((a, b) => a.startMs - b.startMs);
   return shown.map(({ chapter, startMs, endMs }, index) => {
     const own = marks
       .filter(({ mark, showing }) => mark.chapterId === chapter.id && showing !== "pencilled")
       .map((mark) => ({ mark, lessonMs: at(mark) }))
-      .sort(
+      .toSorted(
         (a, b) => (a.lessonMs ?? endMs) - (b.lessonMs ?? endMs) || (a.mark.mark.id < b.mark.mark.id ? -1 : 1),
       );
     const panels = own
       .filter(({ mark }) => mark.mark.kind === "caution")
-      .sort((a, b) => severity(a.mark) - severity(b.mark));
+      .toSorted((a, b) => severity(a.mark) - severity(b.mark));
     const lead = panels[0]?.mark ?? null;
     const items: StepItem[] = [];
     const times = new Map(own.map(({ mark, lessonMs }) => [mark, lessonMs]));

@@ -7,7 +7,7 @@ export type Stretch = Readonly<{ recordingId: string; fromMs: number; toMs: numb
 /** The stretches as their union: sorted, without overlap. */
 function union(stretches: readonly Readonly<{ fromMs: number; toMs: number }>[]) {
   const merged: { fromMs: number; toMs: number }[] = [];
-  for (const { fromMs, toMs } of [...stretches].sort((a, b) => a.fromMs - b.fromMs)) {
+  for (const { fromMs, toMs } of stretches.toSorted((a, b) => a.fromMs - b.fromMs)) {
     const last = merged.at(-1);
     if (last && fromMs <= last.toMs) last.toMs = Math.max(last.toMs, toMs);
     else if (toMs > fromMs) merged.push({ fromMs, toMs });

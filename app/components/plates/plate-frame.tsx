@@ -71,8 +71,7 @@ export function PlateFrame({
   children?: React.ReactNode;
 }) {
   return (
-    <div
-      role="group"
+    <article
       aria-label={name}
       className={METAL[metal]}
       data-current={current ? "yes" : undefined}
@@ -91,6 +90,6 @@ export function PlateFrame({
           <LooksWrong of={of} name={name} />
         </div>
       </div>
-    </div>
+    </article>
   );
 }

@@ -259,14 +259,15 @@ test("a tool shows its size in its own unit alone", () => {
   expect(text).toContain("Size noted from the recording");
 });
 
+const panel = (signalWord: Mark["signalWord"]) =>
+  html(
+    <Plate
+      of={learnerMark({ kind: "caution", signalWord, words: "Turn the nut, not the stud.", values: [] })}
+      view={METRIC}
+    />,
+  );
+
 test("signal panels: a triangle where a person is hurt, none for NOTICE", () => {
-  const panel = (signalWord: Mark["signalWord"]) =>
-    html(
-      <Plate
-        of={learnerMark({ kind: "caution", signalWord, words: "Turn the nut, not the stud.", values: [] })}
-        view={METRIC}
-      />,
-    );
   for (const word of ["DANGER", "WARNING", "CAUTION"] as const) {
     expect(panel(word)).toContain("<svg");
     expect(panel(word)).toContain(word);
@@ -274,14 +275,15 @@ test("signal panels: a triangle where a person is hurt, none for NOTICE", () => 
   expect(panel("NOTICE")).not.toContain("<svg");
 });
 
+const variant = (id: string, text: string, which: string) =>
+  learnerMark({
+    ...CHECKED,
+    id: id as MarkId,
+    values: valuesOf(text),
+    applies: { ...BARE.applies, variant: which, question: "Flanged or plain nut?" },
+  });
+
 test("variants of one component stand together under the question that settles them", () => {
-  const variant = (id: string, text: string, which: string) =>
-    learnerMark({
-      ...CHECKED,
-      id: id as MarkId,
-      values: valuesOf(text),
-      applies: { ...BARE.applies, variant: which, question: "Flanged or plain nut?" },
-    });
   const groups = groupVariants([
     variant("01JMARK0000000000000000001", "65 lbf·ft", "flanged nut"),
     variant("01JMARK0000000000000000002", "52 lbf·ft", "plain nut"),

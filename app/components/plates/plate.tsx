@@ -72,7 +72,7 @@ export function VariantPlates({
   footOf?: (mark: LearnerMark) => React.ReactNode;
 }) {
   return (
-    <div role="group" aria-label={variants.question} className="grid gap-3 border-l-4 border-ink pl-3">
+    <section aria-label={variants.question} className="grid gap-3 border-l-4 border-ink pl-3">
       <p>
         <strong className="text-lg">{variants.question}</strong>{" "}
         <span className="block text-sm">
@@ -89,6 +89,6 @@ export function VariantPlates({
           foot={footOf?.(mark)}
         />
       ))}
-    </div>
+    </section>
   );
 }

@@ -32,8 +32,7 @@ export function SignalPanel({
   foot?: React.ReactNode;
 }) {
   return (
-    <div
-      role="group"
+    <article
       aria-label={word}
       className="overflow-hidden rounded border-[3px] border-signal-frame bg-signal-sheet text-signal-frame outline outline-1 outline-line-strong"
     >
@@ -50,6 +49,6 @@ export function SignalPanel({
         </div>
         {foot === undefined ? null : <div className="flex flex-wrap gap-x-5">{foot}</div>}
       </div>
-    </div>
+    </article>
   );
 }

@@ -1,4 +1,4 @@
-import { useRef } from "react";
+import { useEffect, useRef } from "react";
 import type { PlateView } from "~/components/plates/plate-words";
 import { type Step, stepAt } from "~/lessons/steps";
 import { formatTimecode } from "~/lessons/timecode";
@@ -136,50 +136,48 @@ export function LessonPlayer({
   const frame = useRef<HTMLElement>(null);
   const shown = phase !== "idle";
 
-  const onKeyDown = (event: React.KeyboardEvent) => {
-    if (event.altKey || event.ctrlKey || event.metaKey || !shown) return;
-    const target = event.target as HTMLElement;
-    // Buttons, the slider and the list of speeds have keys of their own.
-    if (target.closest("button, a, input, select")) {
-      if (event.key === " " || target.closest("input, select")) return;
-    }
-    const { momentMs, playing } = store.get();
-    const to = (toMs: number) => jump({ toMs: Math.min(Math.max(0, toMs), durationMs), play: playing });
-    if (event.key === " ") engineRef.current?.toggle();
-    else if (event.key === "ArrowLeft") to(momentMs - STEP_MS);
-    else if (event.key === "ArrowRight") to(momentMs + STEP_MS);
-    else return;
-    event.preventDefault();
-  };
+  // Keys count wherever the focus is inside the player.
+  useEffect(() => {
+    const element = frame.current;
+    if (!element || !shown) return;
+    const onKeyDown = (event: KeyboardEvent) => {
+      if (event.altKey || event.ctrlKey || event.metaKey || !(event.target instanceof HTMLElement)) return;
+      // The slider and the list of speeds have arrows of their own, and a button its space bar.
+      if (event.target.closest("input, select")) return;
+      const { momentMs, playing } = store.get();
+      const to = (toMs: number) => jump({ toMs: Math.min(Math.max(0, toMs), durationMs), play: playing });
+      if (event.key === "ArrowLeft") to(momentMs - STEP_MS);
+      else if (event.key === "ArrowRight") to(momentMs + STEP_MS);
+      else return;
+      event.preventDefault();
+    };
+    element.addEventListener("keydown", onKeyDown);
+    return () => element.removeEventListener("keydown", onKeyDown);
+  }, [shown, durationMs, store, jump]);
 
   return (
     <>
       <section
         ref={frame}
         aria-label="Recording"
-        onKeyDown={onKeyDown}
         className="player no-print z-20 min-w-0 bg-graphite text-on-graphite max-lg:sticky max-lg:bottom-0 max-lg:-mx-4 lg:overflow-hidden lg:rounded-md"
       >
         <MarkLane marks={marks} durationMs={durationMs} />
         <div className={`relative ${shown ? "player-screen" : "lg:aspect-video"}`}>
           {shown ? (
-            <div
-              tabIndex={0}
-              role="group"
-              aria-label="Picture. Space plays and pauses, arrow keys move five seconds"
-              className="absolute inset-0 -outline-offset-3"
-              onClick={(event) => {
-                event.currentTarget.focus();
-                engineRef.current?.toggle();
-              }}
-            >
+            <>
               <Picture lesson={lesson} engineRef={engineRef} />
+              <button
+                type="button"
+                className="absolute inset-0 cursor-pointer -outline-offset-4"
+                onClick={() => engineRef.current?.toggle()}
+              >
+                <span className="sr-only">Picture: play or pause; arrow keys move five seconds</span>
+              </button>
               {phase === "loading" ? (
-                <p role="status" className="absolute inset-0 grid place-items-center">
-                  Loading the recording
-                </p>
+                <output className="absolute inset-0 grid place-items-center">Loading the recording</output>
               ) : null}
-            </div>
+            </>
           ) : (
             <Start lesson={lesson} poster={poster} continueMs={continueMs} length={length} />
           )}

@@ -73,7 +73,7 @@ test("a report that failed is told with the next one; dragging the timeline tell
 test("marks on the lane keep their order, stay on it and never touch", () => {
   const places = [0.5, 0.5, 0.505, 0.99, 1, 0];
   const placed = spread(places, 0.06);
-  const sorted = [...placed].sort((a, b) => a - b);
+  const sorted = placed.toSorted((a, b) => a - b);
   sorted.forEach((place, n) => {
     expect(place).toBeGreaterThanOrEqual(-1e-9);
     expect(place).toBeLessThanOrEqual(1 + 1e-9);

@@ -33,19 +33,20 @@ export function SaidList({ lines }: { lines: readonly SaidLine[] }) {
     // Only the list scrolls, never the page.
     box.scrollTop = line.offsetTop - box.clientHeight / 3;
   }, [current, playing]);
-  const touch = () => {
-    touched.current = performance.now();
-  };
+  useEffect(() => {
+    const box = list.current;
+    if (!box) return;
+    const touch = () => {
+      touched.current = performance.now();
+    };
+    const signs = ["wheel", "touchmove", "keydown"] as const;
+    for (const sign of signs) box.addEventListener(sign, touch, { passive: true });
+    return () => {
+      for (const sign of signs) box.removeEventListener(sign, touch);
+    };
+  }, []);
   return (
-    <ol
-      ref={list}
-      tabIndex={0}
-      aria-label="What is said"
-      onWheel={touch}
-      onTouchMove={touch}
-      onKeyDown={touch}
-      className="relative max-h-72 overflow-y-auto overscroll-contain"
-    >
+    <ol ref={list} aria-label="What is said" className="relative max-h-72 overflow-y-auto overscroll-contain">
       {lines.map((line, index) => (
         <li key={`${line.atMs}-${index}`}>
           <button

@@ -6,7 +6,7 @@ import type { TimedMark } from "~/components/player/mark-lane";
 import { PlayerProvider } from "~/components/player/player-context";
 import { SaidList } from "~/components/player/said-list";
 import { CastleNut } from "~/components/plates/castle-nut";
-import { momentDay } from "~/components/plates/plate-words";
+import { momentDay, placeWords } from "~/components/plates/plate-words";
 import { sheetWords, StepSheet } from "~/components/step-sheet/step-sheet";
 import { ButtonLink } from "~/components/ui/button";
 import { EmptyState, Page, Remark, Sheet } from "~/components/ui/page";
@@ -63,7 +63,7 @@ export default function Lesson({ loaderData }: Route.ComponentProps) {
       const lessonMs = lessonTime(clips, mark.mark.recordingId, mark.mark.atMs);
       return lessonMs === null || mark.showing === "pencilled" ? [] : [{ mark, lessonMs }];
     })
-    .sort((a, b) => a.lessonMs - b.lessonMs);
+    .toSorted((a, b) => a.lessonMs - b.lessonMs);
   const length = lessonLength(clips);
   const first = clips[0]?.recordingId;
   const rules = localRulesWords(snapshot.system);
@@ -74,7 +74,9 @@ export default function Lesson({ loaderData }: Route.ComponentProps) {
         under={
           <p className="flex flex-wrap gap-x-5 gap-y-0.5">
             <span>{vehiclesWords(snapshot.vehicles)}</span>
-            {snapshot.position === "" ? null : <span>{snapshot.position}</span>}
+            {snapshot.position === "" ? null : (
+              <span>{placeWords({ position: snapshot.position, side: "none" })}</span>
+            )}
             <span>{length}</span>
             <span>Recorded by {snapshot.recordedBy}</span>
             <span>
