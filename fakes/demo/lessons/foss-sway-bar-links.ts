@@ -63,7 +63,7 @@ export const fossSwayBarLinks: DemoLesson = {
       kind: "torque",
       at: 110_460,
       component: "Upper link nut to strut",
-      value: "52 lbf·ft",
+      value: "70 Nm",
       thread: "M12x1.75",
       propertyClass: "8.8",
       condition: "as-supplied",
