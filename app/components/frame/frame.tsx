@@ -57,7 +57,11 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
       </a>
       <header className="no-print bg-enamel-deep text-on-graphite">
         <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-5 gap-y-1.5 px-4 py-2 sm:px-7">
-          <Link to={href("/")} className="no-underline" aria-label="Castlenut, library">
+          <Link
+            to={href("/")}
+            className="inline-flex min-h-11 items-center no-underline"
+            aria-label="Castlenut, library"
+          >
             <Brand />
           </Link>
           <div className="order-2 w-full lg:order-none lg:w-auto lg:min-w-60 lg:max-w-2xl lg:flex-1">

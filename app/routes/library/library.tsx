@@ -163,6 +163,17 @@ function Filters({ wanted, choices }: Pick<Data, "wanted" | "choices">) {
   );
 }
 
+/** A system takes as many columns as it has lessons, so that small ones share a row. */
+const WIDTHS = [
+  { span: "", columns: "" },
+  { span: "sm:col-span-2", columns: "sm:grid-cols-2" },
+  { span: "sm:col-span-2 lg:col-span-3", columns: "sm:grid-cols-2 lg:grid-cols-3" },
+  {
+    span: "sm:col-span-2 lg:col-span-3 xl:col-span-4",
+    columns: "sm:grid-cols-2 lg:grid-cols-3 xl:grid-cols-4",
+  },
+] as const;
+
 export default function Library({
   loaderData: { wanted, total, choices, shown, viewer },
 }: Route.ComponentProps) {
@@ -188,22 +199,26 @@ export default function Library({
               </Link>
             </EmptyState>
           ) : null}
-          {systems.map((system) => (
-            <section key={system} className="mb-8">
-              <h2 className="mb-3 text-2xl">
-                <Link to={`/?system=${system}`} className="text-ink no-underline hover:underline">
-                  {SYSTEM_WORDS[system]}
-                </Link>
-              </h2>
-              <ul className="grid gap-4 sm:grid-cols-2 lg:grid-cols-3 xl:grid-cols-4">
-                {shown
-                  .filter((lesson) => lesson.system === system)
-                  .map((lesson) => (
-                    <LessonCard key={lesson.lessonId} lesson={lesson} />
-                  ))}
-              </ul>
-            </section>
-          ))}
+          <div className="mb-8 grid gap-x-4 gap-y-8 sm:grid-cols-2 lg:grid-cols-3 xl:grid-cols-4">
+            {systems.map((system) => {
+              const own = shown.filter((lesson) => lesson.system === system);
+              const { span, columns } = WIDTHS[Math.min(own.length, WIDTHS.length) - 1] ?? WIDTHS[0];
+              return (
+                <section key={system} className={span}>
+                  <h2 className="mb-3 text-2xl">
+                    <Link to={`/?system=${system}`} className="text-ink no-underline hover:underline">
+                      {SYSTEM_WORDS[system]}
+                    </Link>
+                  </h2>
+                  <ul className={`grid gap-4 ${columns}`}>
+                    {own.map((lesson) => (
+                      <LessonCard key={lesson.lessonId} lesson={lesson} />
+                    ))}
+                  </ul>
+                </section>
+              );
+            })}
+          </div>
           {shown.length === 0 ? null : (
             <p className="text-sm text-ink-soft">
               Each slot fills in turn: seen the lesson, answered the quiz, shown it on a car. A dashed ring
