@@ -73,7 +73,7 @@ function FirstSteps({ viewer }: { viewer: Data["viewer"] }) {
             Invite an instructor
           </ButtonLink>
         ) : null}
-        <ButtonLink to="/bench">Upload a recording</ButtonLink>
+        <ButtonLink to="/bench/recordings/upload">Upload a recording</ButtonLink>
       </div>
     </EmptyState>
   );
