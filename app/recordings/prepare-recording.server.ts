@@ -75,9 +75,11 @@ export async function prepareRecording(scope: ShopScope, payload: unknown): Prom
     const { width, height, columns } = STORYBOARD;
     const board = join(folder, "storyboard.jpg");
     const fit = `scale=${width}:${height}:force_original_aspect_ratio=decrease,pad=${width}:${height}:-1:-1`;
-    const filter = `fps=1000/${everyMs.toFixed(3)},${fit},tile=${columns}x${Math.ceil(count / columns)}`;
+    const filter = `fps=fps=1000/${everyMs.toFixed(3)}:eof_action=pass,${fit},tile=${columns}x${Math.ceil(count / columns)}`;
+    // Of long recordings only key frames are decoded: there are enough of them.
+    const quickly = durationMs > 20 * MINUTE ? ["-skip_frame", "nokey"] : [];
     await runFfmpeg(
-      ["-skip_frame", "nokey", "-i", source, "-an", "-vf", filter, "-frames:v", "1", "-q:v", "6", board],
+      [...quickly, "-i", source, "-an", "-vf", filter, "-frames:v", "1", "-q:v", "6", board],
       20 * MINUTE,
     );
     const peaks = recording.audioCodec === null ? soundPeaks(new Int16Array(0)) : await readSound(source);

@@ -173,8 +173,8 @@ export async function signParts(
   parts: readonly number[],
 ): Promise<{ ok: true; urls: Record<number, string> } | Refused> {
   const row = findUpload(scope, recordingId);
-  if (!row?.uploadId) return missing;
-  if (row.state !== "uploading")
+  if (!row) return missing;
+  if (row.state !== "uploading" || row.uploadId === null)
     return { ok: false, status: 409, sentence: "This upload is finished already." };
   const last = partsOf(row.sizeBytes, row.partBytes).length;
   if (parts.some((n) => n < 1 || n > last))
@@ -217,7 +217,7 @@ export async function completeUpload(
   now: number,
 ): Promise<{ ok: true } | (Refused & { missing?: number[] })> {
   const row = findUpload(scope, recordingId);
-  if (!row?.uploadId) return missing;
+  if (!row) return missing;
   if (row.state !== "uploading") return { ok: true };
   const stored = await storedParts(row);
   if (stored) {

@@ -170,11 +170,12 @@ export class ObjectFiles {
     const folder = this.#upload(id);
     const stored = await this.parts(id);
     const md5 = createHash("md5");
+    if (wanted.some(({ n }, at) => at > 0 && n <= (wanted[at - 1]?.n ?? 0)))
+      throw new S3Error(400, "InvalidPartOrder");
     const chosen = wanted.map(({ n, etag }, at) => {
       const part = stored.find((found) => found.n === n);
       if (!part || part.etag.replaceAll('"', "") !== etag.replaceAll('"', ""))
         throw new S3Error(400, "InvalidPart");
-      if (at > 0 && n <= (wanted[at - 1]?.n ?? 0)) throw new S3Error(400, "InvalidPartOrder");
       if (at < wanted.length - 1 && part.size < MIN_PART_BYTES) throw new S3Error(400, "EntityTooSmall");
       md5.update(Buffer.from(part.etag.replaceAll('"', ""), "hex"));
       return part;

@@ -1,0 +1,334 @@
+import { execFileSync } from "node:child_process";
+import { mkdtempSync, readFileSync, rmSync, truncateSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { GetObjectCommand, HeadObjectCommand } from "@aws-sdk/client-s3";
+import { eq } from "drizzle-orm";
+import { afterAll, beforeAll, expect, test } from "vitest";
+import type { Scope, ShopScope } from "~/auth/scope.server";
+import { runNextTask } from "~/queue/run-tasks.server";
+import { taskHandlers } from "~/background.server";
+import { env } from "~/env.server";
+import { recordings, tasks } from "#drizzle/schema/index";
+import { startFakeS3, type FakeS3 } from "../../fakes/s3/start-fake-s3";
+import { aDatabase, aLesson, aScope, aShop, NOON } from "../../tests/support/factories";
+import { aPublishedLesson } from "../../tests/support/published-lesson";
+import { checkRecording } from "./check-recording.server";
+import { deleteRecording, listRecordings } from "./list-recordings.server";
+import { objectStorage } from "./object-storage.server";
+import { pictureLink, playbackLink } from "./playback-link.server";
+import { readPeaks } from "./sound-peaks";
+import {
+  abandonUpload,
+  beginUpload,
+  cancelUpload,
+  completeUpload,
+  signParts,
+  uploadState,
+} from "./upload.server";
+
+const folder = mkdtempSync(join(tmpdir(), "upload-"));
+let fake: FakeS3;
+
+function film(name: string, ...args: string[]): string {
+  const file = join(folder, name);
+  const picture = ["-f", "lavfi", "-i", "testsrc2=s=320x180:r=12:d=4", "-f", "lavfi", "-i", "sine=f=440:d=4"];
+  execFileSync("ffmpeg", ["-nostdin", "-loglevel", "error", "-y", ...picture, ...args, file]);
+  return file;
+}
+
+let good: string;
+
+beforeAll(async () => {
+  fake = await startFakeS3({
+    root: join(folder, "objects"),
+    port: 0,
+    accessKeyId: "id",
+    secretAccessKey: "secret",
+    origins: ["*"],
+    buckets: ["films"],
+  });
+  Object.assign(process.env, {
+    NODE_ENV: "test",
+    PUBLIC_ORIGIN: "http://localhost:3000",
+    SESSION_SECRET: "a secret of thirty-two characters or more",
+    DATABASE_FILE: ":memory:",
+    S3_ENDPOINT: fake.url,
+    S3_PUBLIC_ENDPOINT: fake.url,
+    S3_BUCKET: "films",
+    S3_ACCESS_KEY_ID: "id",
+    S3_SECRET_ACCESS_KEY: "secret",
+    SMTP_URL: "smtp://localhost:1",
+  });
+  good = film("good.mp4", "-c:v", "libx264", "-pix_fmt", "yuv420p", "-c:a", "aac", "-movflags", "+faststart");
+}, 60_000);
+
+afterAll(async () => {
+  await fake.close();
+  rmSync(folder, { recursive: true, force: true });
+});
+
+function aBench() {
+  const db = aDatabase();
+  const shopId = aShop(db);
+  return {
+    db,
+    shopId,
+    marta: aScope(db, shopId, "instructor"),
+    dario: aScope(db, shopId, "instructor"),
+    tom: aScope(db, shopId, "trainee"),
+  };
+}
+
+/** Sends a file as the browser does: begin, sign, put, complete. */
+async function send(scope: Scope, file: string, fileName = "film.mp4", declared?: number) {
+  const body = readFileSync(file);
+  const plan = await beginUpload(
+    scope,
+    { fileName, sizeBytes: declared ?? body.length, lastModified: 1 },
+    NOON,
+  );
+  if (!plan.ok) throw new Error(plan.sentence);
+  const signed = await signParts(scope, plan.recordingId, [1]);
+  if (!signed.ok) throw new Error(signed.sentence);
+  expect((await fetch(signed.urls[1] ?? "", { method: "PUT", body })).status).toBe(200);
+  return plan.recordingId;
+}
+
+/** Does every task that is due, light ones first, as the queue does. */
+async function work(scope: Scope): Promise<void> {
+  const clock = () => NOON;
+  while (await runNextTask(scope.db, taskHandlers, clock, "light"));
+  while (await runNextTask(scope.db, taskHandlers, clock, "heavy"));
+}
+
+const find = (scope: Scope, id: string) =>
+  scope.db
+    .select()
+    .from(recordings)
+    .all()
+    .find((row) => row.id === id);
+
+test("a recording goes up, is checked by its contents and gets poster, storyboard and peaks", async () => {
+  const { marta, db } = aBench();
+  const id = await send(marta, good);
+  expect(await completeUpload(marta, id, NOON)).toEqual({ ok: true });
+  expect(await completeUpload(marta, id, NOON)).toEqual({ ok: true });
+  expect(db.select().from(tasks).where(eq(tasks.kind, "check-recording")).all()).toHaveLength(1);
+  await work(marta);
+  const row = find(marta, id);
+  expect(row).toMatchObject({
+    state: "ready",
+    container: "mp4",
+    videoCodec: "avc",
+    audioCodec: "aac",
+    width: 320,
+    height: 180,
+  });
+  expect(Math.abs((row?.durationMs ?? 0) - 4000)).toBeLessThan(100);
+  expect(Math.max(...readPeaks(row?.peaks ?? null))).toBeGreaterThan(10);
+  for (const what of ["poster", "storyboard"] as const) {
+    const link = await pictureLink(marta, id, what, NOON);
+    const picture = new Uint8Array(await (await fetch(link?.url ?? "")).arrayBuffer());
+    // A JPEG file begins with FF D8 FF (ITU-T T.81, SOI marker).
+    expect([...picture.subarray(0, 3)]).toEqual([0xff, 0xd8, 0xff]);
+  }
+  const link = await playbackLink(marta, id, NOON);
+  const part = await fetch(link?.url ?? "", { headers: { range: "bytes=4-7" } });
+  expect([part.status, part.headers.get("content-type"), await part.text()]).toEqual([
+    206,
+    "video/mp4",
+    "ftyp",
+  ]);
+  expect(link?.expiresAt).toBe(NOON + 15 * 60_000);
+}, 60_000);
+
+test("the same file chosen again goes on where it was, for the same person only", async () => {
+  const { marta, dario } = aBench();
+  const order = { fileName: "long.mp4", sizeBytes: 40 * 1024 * 1024, lastModified: 7 };
+  const first = await beginUpload(marta, order, NOON);
+  if (!first.ok) throw new Error(first.sentence);
+  const signed = await signParts(marta, first.recordingId, [2]);
+  if (!signed.ok) throw new Error(signed.sentence);
+  await fetch(signed.urls[2] ?? "", { method: "PUT", body: new Uint8Array(first.partBytes) });
+  const again = await beginUpload(marta, order, NOON + 1000);
+  expect(again).toEqual({ ok: true, recordingId: first.recordingId, partBytes: 16 * 1024 * 1024, done: [2] });
+  const other = await beginUpload(dario, order, NOON);
+  expect(other.ok && other.recordingId).not.toBe(first.recordingId);
+  expect(await uploadState(dario, first.recordingId)).toMatchObject({ ok: false, status: 404 });
+  expect(await signParts(dario, first.recordingId, [1])).toMatchObject({ ok: false, status: 404 });
+  expect(await completeUpload(marta, first.recordingId, NOON)).toMatchObject({
+    ok: false,
+    status: 409,
+    missing: [1, 3],
+  });
+  expect(find(marta, first.recordingId)?.state).toBe("uploading");
+});
+
+test("a part that arrived short counts as missing", async () => {
+  const { marta } = aBench();
+  const id = await send(marta, good, "short.mp4", readFileSync(good).length + 1000);
+  expect(await completeUpload(marta, id, NOON)).toMatchObject({ ok: false, missing: [1] });
+});
+
+test("only parts that the file has are signed, and nothing of another shop is touched", async () => {
+  const { db, marta } = aBench();
+  const plan = await beginUpload(marta, { fileName: "a.mp4", sizeBytes: 100, lastModified: 1 }, NOON);
+  if (!plan.ok) throw new Error(plan.sentence);
+  expect(await signParts(marta, plan.recordingId, [2])).toMatchObject({ ok: false, status: 422 });
+  const stranger = aScope(db, aShop(db), "owner");
+  for (const result of [
+    await signParts(stranger, plan.recordingId, [1]),
+    await completeUpload(stranger, plan.recordingId, NOON),
+    await cancelUpload(stranger, plan.recordingId, NOON),
+    await uploadState(stranger, plan.recordingId),
+  ])
+    expect(result).toMatchObject({ ok: false, status: 404 });
+  expect(await deleteRecording(stranger, plan.recordingId, NOON)).toEqual({ ok: false, reason: "missing" });
+  expect(await playbackLink(stranger, plan.recordingId, NOON)).toBeNull();
+  expect(listRecordings(stranger)).toEqual([]);
+});
+
+test("an empty file and one over 8 GB are refused before anything is stored", async () => {
+  const { marta, db } = aBench();
+  expect(await beginUpload(marta, { fileName: "a.mp4", sizeBytes: 0, lastModified: 1 }, NOON)).toMatchObject({
+    ok: false,
+    status: 422,
+  });
+  expect(
+    await beginUpload(marta, { fileName: "a.mp4", sizeBytes: 9e9, lastModified: 1 }, NOON),
+  ).toMatchObject({ ok: false, status: 422 });
+  expect(db.select().from(recordings).all()).toEqual([]);
+});
+
+test("a text renamed to .mp4 and a file that was cut off are refused by their contents and leave storage", async () => {
+  const { marta } = aBench();
+  const text = join(folder, "text.mp4");
+  writeFileSync(text, "this is not a video\n".repeat(500));
+  const cut = join(folder, "cut.mp4");
+  writeFileSync(cut, readFileSync(good));
+  truncateSync(cut, Math.floor(readFileSync(good).length * 0.5));
+  const sound = film("sound.mp4", "-map", "1:a", "-c:a", "aac");
+  for (const [file, words] of [
+    [text, "not a video file"],
+    [cut, "its end is missing"],
+    [sound, "no picture"],
+  ] as const) {
+    const id = await send(marta, file, `${words}.mp4`);
+    await completeUpload(marta, id, NOON);
+    await work(marta);
+    const row = find(marta, id);
+    expect({ file, state: row?.state, says: row?.stateReason.includes(words) }).toEqual({
+      file,
+      state: "refused",
+      says: true,
+    });
+    await expect(
+      objectStorage().send(new HeadObjectCommand({ Bucket: env().S3_BUCKET, Key: row?.objectKey ?? "" })),
+    ).rejects.toThrow();
+  }
+}, 60_000);
+
+test("VP9 in WebM plays as it is; HEVC is converted to H.264 and then plays", async () => {
+  const { marta } = aBench();
+  const webm = film(
+    "film.webm",
+    "-c:v",
+    "libvpx-vp9",
+    "-b:v",
+    "200k",
+    "-deadline",
+    "realtime",
+    "-c:a",
+    "libopus",
+  );
+  const first = await send(marta, webm, "film.webm");
+  await completeUpload(marta, first, NOON);
+  await work(marta);
+  expect(find(marta, first)).toMatchObject({ state: "ready", container: "webm", videoCodec: "vp9" });
+  const hevc = film(
+    "film.mov",
+    "-c:v",
+    "libx265",
+    "-x265-params",
+    "log-level=error",
+    "-tag:v",
+    "hvc1",
+    "-c:a",
+    "aac",
+  );
+  const second = await send(marta, hevc, "film.mov");
+  await completeUpload(marta, second, NOON);
+  await checkRecording(
+    { db: marta.db, shopId: marta.shopId, by: "test" } as ShopScope,
+    { recordingId: second },
+    NOON,
+  );
+  expect(find(marta, second)).toMatchObject({ state: "converting", videoCodec: "hevc" });
+  expect(await playbackLink(marta, second, NOON)).toBeNull();
+  await work(marta);
+  const row = find(marta, second);
+  expect(row).toMatchObject({ state: "ready", stateReason: "" });
+  const converted = await objectStorage().send(
+    new GetObjectCommand({ Bucket: env().S3_BUCKET, Key: row?.playKey ?? "" }),
+  );
+  writeFileSync(join(folder, "converted.mp4"), (await converted.Body?.transformToByteArray()) ?? "");
+  const probed = execFileSync(
+    "ffprobe",
+    ["-v", "error", "-show_entries", "stream=codec_name", "-of", "csv=p=0", join(folder, "converted.mp4")],
+    { encoding: "utf8" },
+  );
+  expect(probed.trim().split("\n")).toEqual(["h264", "aac"]);
+}, 120_000);
+
+test("a trainee plays only what a published lesson plays", async () => {
+  const { marta, dario, tom } = aBench();
+  const id = await send(marta, good);
+  await completeUpload(marta, id, NOON);
+  await work(marta);
+  expect(await playbackLink(tom, id, NOON)).toBeNull();
+  expect(await playbackLink(dario, id, NOON)).not.toBeNull();
+  const lesson = aPublishedLesson(marta, dario, []);
+  const published = await playbackLink(tom, lesson.recordingId, NOON);
+  expect(published).not.toBeNull();
+}, 60_000);
+
+test("a recording is kept while a lesson plays it, and gone for good when it is deleted", async () => {
+  const { marta } = aBench();
+  const id = await send(marta, good);
+  await completeUpload(marta, id, NOON);
+  await work(marta);
+  aLesson(marta, { title: "Belt" }, id);
+  expect(await deleteRecording(marta, id, NOON)).toMatchObject({
+    ok: false,
+    reason: "used",
+    sentence: expect.stringContaining("“Belt”"),
+  });
+  const free = await send(marta, good, "free.mp4");
+  await completeUpload(marta, free, NOON);
+  await work(marta);
+  const key = find(marta, free)?.objectKey ?? "";
+  expect(await deleteRecording(marta, free, NOON)).toEqual({ ok: true });
+  await expect(
+    objectStorage().send(new HeadObjectCommand({ Bucket: env().S3_BUCKET, Key: key })),
+  ).rejects.toThrow();
+  expect(await playbackLink(marta, free, NOON)).toBeNull();
+}, 60_000);
+
+test("a cancelled upload and one that nobody finished for a week leave nothing in storage", async () => {
+  const { marta, db } = aBench();
+  for (const give of ["cancel", "abandon"] as const) {
+    const plan = await beginUpload(marta, { fileName: `${give}.mp4`, sizeBytes: 100, lastModified: 1 }, NOON);
+    if (!plan.ok) throw new Error(plan.sentence);
+    if (give === "cancel") await cancelUpload(marta, plan.recordingId, NOON);
+    else
+      await abandonUpload({ db, shopId: marta.shopId, by: "test" }, { recordingId: plan.recordingId }, NOON);
+    expect(find(marta, plan.recordingId)?.deletedAt).toBe(NOON);
+    const again = await beginUpload(
+      marta,
+      { fileName: `${give}.mp4`, sizeBytes: 100, lastModified: 1 },
+      NOON,
+    );
+    expect(again.ok && again.recordingId).not.toBe(plan.recordingId);
+  }
+});
