@@ -12,6 +12,7 @@ import { env } from "~/env.server";
 import { recordings, tasks } from "#drizzle/schema/index";
 import { startFakeS3, type FakeS3 } from "../../fakes/s3/start-fake-s3";
 import { aDatabase, aLesson, aScope, aShop, NOON } from "../../tests/support/factories";
+import { setTestEnvironment } from "../../tests/support/environment";
 import { aPublishedLesson } from "../../tests/support/published-lesson";
 import { checkRecording } from "./check-recording.server";
 import { deleteRecording, listRecordings } from "./list-recordings.server";
@@ -48,18 +49,7 @@ beforeAll(async () => {
     origins: ["*"],
     buckets: ["films"],
   });
-  Object.assign(process.env, {
-    NODE_ENV: "test",
-    PUBLIC_ORIGIN: "http://localhost:3000",
-    SESSION_SECRET: "a secret of thirty-two characters or more",
-    DATABASE_FILE: ":memory:",
-    S3_ENDPOINT: fake.url,
-    S3_PUBLIC_ENDPOINT: fake.url,
-    S3_BUCKET: "films",
-    S3_ACCESS_KEY_ID: "id",
-    S3_SECRET_ACCESS_KEY: "secret",
-    SMTP_URL: "smtp://localhost:1",
-  });
+  setTestEnvironment({ S3_ENDPOINT: fake.url, S3_PUBLIC_ENDPOINT: fake.url });
   good = film("good.mp4", "-c:v", "libx264", "-pix_fmt", "yuv420p", "-c:a", "aac", "-movflags", "+faststart");
 }, 60_000);
 
