@@ -9,7 +9,13 @@ export default defineConfig({
   },
   test: {
     environment: "node",
-    include: ["app/**/*.test.{ts,tsx}", "fakes/**/*.test.ts", "drizzle/**/*.test.ts", "tests/*.test.ts", "tests/reference/**/*.test.ts"],
+    include: [
+      "app/**/*.test.{ts,tsx}",
+      "fakes/**/*.test.ts",
+      "drizzle/**/*.test.ts",
+      "tests/*.test.ts",
+      "tests/reference/**/*.test.ts",
+    ],
     testTimeout: 20_000,
     hookTimeout: 30_000,
   },

@@ -14,7 +14,7 @@ export const middleware: Route.MiddlewareFunction[] = [
   },
 ];
 
-export function meta(_: Route.MetaArgs) {
+export function meta() {
   return [{ title: "Castlenut" }];
 }
 

@@ -15,6 +15,8 @@ export default [
     index("routes/library/library.tsx"),
     route("search", "routes/library/search.tsx"),
     route("lessons/:lessonId", "routes/library/lesson.tsx"),
+    route("recordings/:recordingId/play", "routes/library/play.ts"),
+    route("recordings/:recordingId/:what", "routes/library/picture.ts"),
     route("lessons/:lessonId/values/:markId/wrong", "routes/library/looks-wrong.tsx"),
 
     // Each person: what to learn, what is learned.
@@ -34,6 +36,8 @@ export default [
 
     // Instructors and owners: from recording to lesson.
     route("bench", "routes/bench/bench.tsx"),
+    route("bench/recordings", "routes/bench/recordings.tsx"),
+    route("bench/recordings/upload", "routes/bench/upload.tsx"),
     route("bench/lessons/new", "routes/bench/lesson-new.tsx"),
     route("bench/lessons/:lessonId", "routes/bench/lesson.tsx"),
     route("bench/lessons/:lessonId/marks/new", "routes/bench/mark-new.tsx"),
@@ -61,6 +65,9 @@ export default [
       route("units", "routes/api/units.ts"),
       route("search", "routes/api/search.ts"),
       route("watched", "routes/api/watched.ts"),
+      route("uploads", "routes/api/uploads.ts"),
+      route("uploads/:recordingId", "routes/api/upload.ts"),
+      route("recordings/:recordingId/link", "routes/api/recording-link.ts"),
     ]),
   ]),
 

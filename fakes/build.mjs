@@ -10,7 +10,7 @@ const MARK = "build/made-from";
 function fingerprint() {
   const hash = createHash("sha256");
   for (const folder of SOURCES)
-    for (const path of readdirSync(folder, { recursive: true, encoding: "utf8" }).sort()) {
+    for (const path of readdirSync(folder, { recursive: true, encoding: "utf8" }).toSorted()) {
       const file = `${folder}/${path}`;
       if (/\.(tsx?|css|svg|json|txt|sql|webmanifest|js)$/.test(file))
         hash.update(file).update(readFileSync(file));

@@ -22,5 +22,5 @@ test("the functions that serve nobody signed in are these and no others", () => 
       ...readFileSync(`app/${path}`, "utf8").matchAll(/export (?:async )?function (\w+)\(\s*\w+: Anonymous/g),
     ])
     .map(([, name]) => name);
-  expect(found.sort()).toEqual(LISTED);
+  expect(found.toSorted()).toEqual(LISTED);
 });

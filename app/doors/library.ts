@@ -173,7 +173,7 @@ let names: string[];
 try {
   names = readdirSync(folder)
     .filter((name) => name.endsWith(".vtt"))
-    .sort();
+    .toSorted();
 } catch {
   refuse(`${folder} cannot be read.`);
 }

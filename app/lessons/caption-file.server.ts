@@ -12,7 +12,9 @@ import { loadDraft } from "./load-draft.server";
  * any track of the lesson's recordings. Undefined: not there for this person.
  */
 export function captionFile(scope: Scope, lessonId: LessonId, trackId: CaptionTrackId): string | undefined {
-  const published = findLearnerLesson(scope, lessonId)?.snapshot.captionTracks.some(({ id }) => id === trackId);
+  const published = findLearnerLesson(scope, lessonId)?.snapshot.captionTracks.some(
+    ({ id }) => id === trackId,
+  );
   if (!published && findOriginal(scope, lessonId, trackId) === undefined) return undefined;
   return writeWebVtt(trackCues(scope, trackId));
 }
@@ -25,14 +27,13 @@ export function findOriginal(
 ): { fileName: string; original: string } | undefined {
   if (!can(scope.role, "lesson:edit")) return undefined;
   const track = findTrack(scope, trackId);
-  const own = track && loadDraft(scope, lessonId)?.clips.some((clip) => clip.recordingId === track.recordingId);
+  const own =
+    track && loadDraft(scope, lessonId)?.clips.some((clip) => clip.recordingId === track.recordingId);
   return own ? track : undefined;
 }
 
 /** The chapters of the newest revision as a file; see `chapterCues` for the times. Undefined: no such lesson. */
 export function chapterFile(scope: Scope, lessonId: LessonId, recordingId?: string): string | undefined {
   const lesson = findLearnerLesson(scope, lessonId);
-  return (
-    lesson && writeWebVtt(chapterCues(lesson.snapshot.chapters, lesson.snapshot.clips, recordingId))
-  );
+  return lesson && writeWebVtt(chapterCues(lesson.snapshot.chapters, lesson.snapshot.clips, recordingId));
 }

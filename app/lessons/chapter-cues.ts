@@ -14,7 +14,9 @@ export function chapterCues(
   recordingId?: string,
 ): Cue[] {
   const cues: Cue[] = [];
-  const pieces = piecesOf(clips).filter((piece) => recordingId === undefined || piece.recordingId === recordingId);
+  const pieces = piecesOf(clips).filter(
+    (piece) => recordingId === undefined || piece.recordingId === recordingId,
+  );
   for (const piece of pieces)
     for (const chapter of chapters) {
       if (chapter.recordingId !== piece.recordingId) continue;
@@ -33,5 +35,5 @@ export function chapterCues(
           identifier: chapter.id,
         });
     }
-  return cues.sort((a, b) => a.startMs - b.startMs);
+  return cues.toSorted((a, b) => a.startMs - b.startMs);
 }

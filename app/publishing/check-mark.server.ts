@@ -79,7 +79,7 @@ export function marksForCheck(scope: Scope, lessonId: LessonId): CheckPage | und
   const draft = loadDraft(scope, lessonId);
   if (!draft) return undefined;
   const at = (mark: Mark) => nearestLessonTime(draft.clips, mark.recordingId, mark.atMs);
-  const own = draft.marks.filter(isForCheck).sort((a, b) => at(a) - at(b));
+  const own = draft.marks.filter(isForCheck).toSorted((a, b) => at(a) - at(b));
   const authors = authorsOf(
     scope,
     own.map((mark) => mark.id),
@@ -145,7 +145,7 @@ export function checkMark(
       .from(checks)
       .where(and(eq(checks.shopId, scope.shopId), eq(checks.markId, markId)))
       .all()
-      .sort((a, b) => a.at - b.at || (a.id < b.id ? -1 : 1))
+      .toSorted((a, b) => a.at - b.at || (a.id < b.id ? -1 : 1))
       .at(-1);
     const again =
       newest?.fingerprint === fingerprint &&

@@ -187,7 +187,7 @@ export function listDoubts(scope: Scope): Readonly<{ open: DoubtRow[]; cleared: 
   return {
     open: doubtRows(scope, and(isNull(doubts.clearedAt)), 500),
     cleared: doubtRows(scope, and(isNotNull(doubts.clearedAt)), 500)
-      .sort((a, b) => (b.cleared?.at ?? 0) - (a.cleared?.at ?? 0))
+      .toSorted((a, b) => (b.cleared?.at ?? 0) - (a.cleared?.at ?? 0))
       .slice(0, 20),
   };
 }
@@ -239,7 +239,7 @@ export function usersOfValue(scope: Scope, lessonId: LessonId, markId: MarkId, n
   for (const { userId, name, at } of answered) add(userId, name, "answered a question on it", at);
   return [...found]
     .map(([userId, user]) => ({ userId, name: user.name, how: [...user.how], lastAt: user.lastAt }))
-    .sort((a, b) => b.lastAt - a.lastAt || a.name.localeCompare(b.name));
+    .toSorted((a, b) => b.lastAt - a.lastAt || a.name.localeCompare(b.name));
 }
 
 /** One doubt with everybody who used the value; undefined: not in this shop. */

@@ -295,7 +295,7 @@ test("each required caution is asked for by its trigger, and a caution that cove
     "hybrid-start": ["engine", "Hybrid oil change", "The engine starts by itself, silent until then."],
     glass: ["engine", "Windscreen", "Gloves: glass splinters."],
   };
-  expect(Object.keys(triggers).sort()).toEqual(REQUIRED_CAUTIONS.map((rule) => rule.key).sort());
+  expect(Object.keys(triggers).toSorted()).toEqual(REQUIRED_CAUTIONS.map((rule) => rule.key).toSorted());
   for (const rule of REQUIRED_CAUTIONS) {
     const [system, title, words] = triggers[rule.key] ?? ["engine", "", ""];
     const of = aCleanLesson({ system, title });

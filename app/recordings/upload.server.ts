@@ -186,7 +186,7 @@ export async function signParts(
       new UploadPartCommand({
         Bucket: env().S3_BUCKET,
         Key: row.objectKey,
-        UploadId: row.uploadId,
+        UploadId: row.uploadId ?? "",
         PartNumber: n,
       }),
       { expiresIn: PART_LINK_S },
@@ -231,7 +231,7 @@ export async function completeUpload(
       new CompleteMultipartUploadCommand({
         Bucket: env().S3_BUCKET,
         Key: row.objectKey,
-        UploadId: row.uploadId,
+        UploadId: row.uploadId ?? "",
         MultipartUpload: { Parts: stored.map(({ n, etag }) => ({ PartNumber: n, ETag: etag })) },
       }),
     );

@@ -19,7 +19,7 @@ import { checkMark, marksForCheck } from "~/publishing/check-mark.server";
 import { publishLesson } from "~/publishing/publish-lesson.server";
 import { objectStorage } from "~/recordings/object-storage.server";
 import { recordingKey } from "~/recordings/object-key";
-import { daysLater, localDateAt } from "~/training/local-date";
+import { localDateAt } from "~/training/local-date";
 import type {
   ChapterId,
   DocumentId,
@@ -27,10 +27,9 @@ import type {
   MarkId,
   RecordingId,
   ShopId,
-  UserId,
   VehicleId,
 } from "#drizzle/schema/ids";
-import { lessons, recordings, shops, users, vehicles } from "#drizzle/schema/index";
+import { recordings, shops, users, vehicles } from "#drizzle/schema/index";
 import type { DemoLesson, DemoMark } from "./demo-lesson";
 import { DEMO_LESSONS, NORTHGATE_LESSON } from "./lessons/index";
 import {

@@ -43,7 +43,7 @@ export async function startFakeSmtp(options: {
   const kept = readdirSync(directory)
     .filter((name) => name.endsWith(".json"))
     .map((name) => JSON.parse(readFileSync(join(directory, name), "utf8")) as ReceivedMail)
-    .sort((a, b) => (a.date < b.date ? -1 : 1));
+    .toSorted((a, b) => (a.date < b.date ? -1 : 1));
   const messages = (to?: string) =>
     kept
       .filter((mail) => to === undefined || to === "" || mail.to.toLowerCase().includes(to.toLowerCase()))

@@ -23,7 +23,7 @@ const entries = given
   : [];
 
 const sorted = <C extends { start: number; end: number }>(cues: readonly C[]) =>
-  [...cues].sort((a, b) => a.start - b.start || b.end - a.end);
+  [...cues].toSorted((a, b) => a.start - b.start || b.end - a.end);
 
 function verdict(entry: Entry): string {
   const read = readWebVtt(readFileSync(`${folder}/${entry.file}`));

@@ -4,7 +4,7 @@ import { requirePermission } from "~/auth/require.server";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { Field, FormProblem, Select, TextArea } from "~/components/ui/field";
 import { EmptyState, Page, Sheet } from "~/components/ui/page";
-import { scopeContext, viewerContext } from "~/context";
+import { scopeContext } from "~/context";
 import { env } from "~/env.server";
 import { parseForm, refuse } from "~/forms/parse-form";
 import { assignable, assignLesson, shopToday } from "~/training/assign-lesson.server";
