@@ -1,211 +1,155 @@
 import { createHash, randomUUID } from "node:crypto";
-import { createReadStream, createWriteStream, existsSync } from "node:fs";
-import { mkdir, readdir, readFile, rename, rm, writeFile } from "node:fs/promises";
-import type { IncomingMessage } from "node:http";
-import { dirname, join } from "node:path";
-import { Transform } from "node:stream";
-import { pipeline } from "node:stream/promises";
-import { unchunk } from "./aws-chunked";
-import { BodyChecksums, verifyChecksums } from "./checksum";
+import { type FileHandle, mkdir, open, readdir, rename, rm, stat } from "node:fs/promises";
+import { join } from "node:path";
+import type { Checksum } from "./checksum";
+import { OneAtATime } from "./one-at-a-time";
 import { S3Error } from "./s3-error";
+import { type Drafts, isMissing, readRecord, removeAbandoned } from "./whole-files";
 
-export type ObjectRecord = { key: string; type: string; size: number; etag: string; modified: string };
-export type PartRecord = { n: number; size: number; etag: string };
-type UploadRecord = { bucket: string; key: string; type: string };
+/** A checksum of the whole body, or one made of the checksums of its parts. */
+export type ObjectChecksum = Checksum & Readonly<{ type: "FULL_OBJECT" | "COMPOSITE" }>;
 
-const MIN_PART_BYTES = 5 * 1024 * 1024;
+/** What is kept of an object beside its body. */
+export type ObjectRecord = Readonly<{
+  key: string;
+  /** File name of the body. Every write takes a new one, so a reader never sees half of two bodies. */
+  body: string;
+  size: number;
+  /** With its quotation marks. */
+  etag: string;
+  /** ISO 8601. */
+  modified: string;
+  /** Headers to answer with: content-type, cache-control, x-amz-meta-… */
+  headers: Readonly<Record<string, string>>;
+  checksum: ObjectChecksum | null;
+}>;
 
-async function readJson<T>(file: string): Promise<T | null> {
-  try {
-    return JSON.parse(await readFile(file, "utf8")) as T;
-  } catch {
-    return null;
-  }
-}
+/** A look at the object that is there (or null) right before it is replaced; throws to keep it. */
+export type Condition = (existing: ObjectRecord | null) => void;
 
-/** Written beside its place and moved there whole: a crash leaves the old file or the new one. */
-async function writeWhole(file: string, text: string): Promise<void> {
-  const draft = `${file}.${randomUUID()}.tmp`;
-  await writeFile(draft, text);
-  await rename(draft, file);
-}
+const isBucket = (name: string) => /^[a-z0-9][a-z0-9.-]{1,61}[a-z0-9]$/.test(name);
 
-/** Objects and open multipart uploads as files under one folder. Names are hashes, so no key can leave it. */
+/** Objects as files under one folder: a record and a body each. File names are hashes, so no key can leave it. */
 export class ObjectFiles {
-  constructor(private readonly root: string) {}
+  readonly #turns = new OneAtATime();
 
-  #object(bucket: string, key: string): string {
-    return join(this.root, bucket, createHash("sha256").update(key).digest("hex"));
+  constructor(
+    private readonly root: string,
+    readonly drafts: Drafts,
+  ) {}
+
+  /** Makes the folder ready and removes bodies that no record names, which a crash may leave. */
+  async open(): Promise<void> {
+    await mkdir(this.root, { recursive: true });
+    await this.drafts.open();
+    for (const { name } of await this.buckets()) {
+      const named = new Set((await this.list(name)).map(({ body }) => body));
+      for (const file of await readdir(join(this.root, name)))
+        if (!file.endsWith(".json") && !named.has(file)) await removeAbandoned(join(this.root, name, file));
+    }
   }
 
-  #upload(id: string): string {
-    if (!/^[0-9a-f-]{36}$/.test(id)) throw new S3Error(404, "NoSuchUpload");
-    return join(this.root, ".uploads", id);
+  #file(bucket: string, name: string): string {
+    return join(this.root, bucket, name);
   }
 
-  bucketExists(bucket: string): boolean {
-    return existsSync(join(this.root, bucket));
+  #record(bucket: string, key: string): string {
+    return this.#file(bucket, `${hashOf(key)}.json`);
+  }
+
+  async buckets(): Promise<{ name: string; created: string }[]> {
+    const names = (await readdir(this.root)).filter(isBucket).toSorted();
+    return Promise.all(
+      names.map(async (name) => ({
+        name,
+        created: (await stat(join(this.root, name))).birthtime.toISOString(),
+      })),
+    );
   }
 
   async createBucket(bucket: string): Promise<void> {
+    if (!isBucket(bucket)) throw new S3Error(400, "InvalidBucketName", undefined, { BucketName: bucket });
     await mkdir(join(this.root, bucket), { recursive: true });
   }
 
-  /** Streams a body into a file; nothing stays of one that is cut or does not match its checksums. */
-  async #receive(
-    request: IncomingMessage,
-    file: string,
-    payloadHash: string,
-  ): Promise<{ etag: string; size: number }> {
-    const sums = new BodyChecksums();
-    const claimed: Record<string, string | string[] | undefined> = { ...request.headers };
-    const count = new Transform({
-      transform(chunk: Buffer, _encoding, done) {
-        sums.update(chunk);
-        done(null, chunk);
-      },
-    });
-    const draft = `${file}.${randomUUID()}.tmp`;
-    await mkdir(dirname(file), { recursive: true });
-    try {
-      const stream = createWriteStream(draft);
-      if (payloadHash.startsWith("STREAMING-"))
-        await pipeline(
-          request,
-          unchunk((name, value) => (claimed[name] = value)),
-          count,
-          stream,
-        );
-      else await pipeline(request, count, stream);
-      const counted = sums.finish();
-      verifyChecksums(counted, claimed, payloadHash);
-      await rename(draft, file);
-      return { etag: `"${counted.md5Hex}"`, size: sums.size };
-    } catch (error) {
-      await rm(draft, { force: true });
-      throw error;
+  /** Throws S3Error when there is no such bucket. */
+  async needBucket(bucket: string): Promise<void> {
+    const found = isBucket(bucket) && (await stat(join(this.root, bucket)).catch(() => null));
+    if (!found) throw new S3Error(404, "NoSuchBucket", undefined, { BucketName: bucket });
+  }
+
+  async removeBucket(bucket: string): Promise<void> {
+    if ((await this.list(bucket)).length > 0)
+      throw new S3Error(409, "BucketNotEmpty", undefined, { BucketName: bucket });
+    await rm(join(this.root, bucket), { recursive: true, force: true });
+  }
+
+  find(bucket: string, key: string): Promise<ObjectRecord | null> {
+    return readRecord<ObjectRecord>(this.#record(bucket, key));
+  }
+
+  /** The object with its open body, which stays readable when it is replaced meanwhile. The caller closes it. */
+  async openObject(bucket: string, key: string): Promise<{ record: ObjectRecord; body: FileHandle }> {
+    for (;;) {
+      const record = await this.find(bucket, key);
+      if (!record) throw new S3Error(404, "NoSuchKey", undefined, { Key: key });
+      try {
+        return { record, body: await open(this.#file(bucket, record.body)) };
+      } catch (error) {
+        if (!isMissing(error)) throw error;
+        // Replaced between the two looks. A record that stays without its body was tampered with.
+        if ((await this.find(bucket, key))?.body === record.body) throw error;
+      }
     }
   }
 
-  async put(
+  /** Moves a finished draft into its place as the object's body. */
+  async keep(
     bucket: string,
-    key: string,
-    request: IncomingMessage,
-    payloadHash: string,
+    draft: string,
+    object: Omit<ObjectRecord, "body" | "modified">,
+    condition: Condition,
   ): Promise<ObjectRecord> {
-    const file = this.#object(bucket, key);
-    const received = await this.#receive(request, file, payloadHash);
-    const record = {
-      key,
-      type: request.headers["content-type"] ?? "application/octet-stream",
-      ...received,
-      modified: new Date().toISOString(),
-    };
-    await writeWhole(`${file}.json`, JSON.stringify(record));
-    return record;
-  }
-
-  async find(bucket: string, key: string): Promise<ObjectRecord> {
-    const record = await readJson<ObjectRecord>(`${this.#object(bucket, key)}.json`);
-    if (!record) throw new S3Error(404, "NoSuchKey");
-    return record;
-  }
-
-  open(bucket: string, key: string, start: number, end: number) {
-    return createReadStream(this.#object(bucket, key), { start, end });
+    return this.#turns.run(`${bucket}/${object.key}`, async () => {
+      await this.needBucket(bucket);
+      const before = await this.find(bucket, object.key);
+      condition(before);
+      const record = {
+        ...object,
+        body: `${hashOf(object.key)}.${randomUUID()}`,
+        modified: new Date().toISOString(),
+      };
+      await rename(draft, this.#file(bucket, record.body));
+      await this.drafts.writeRecord(this.#record(bucket, object.key), record);
+      if (before) await rm(this.#file(bucket, before.body), { force: true });
+      return record;
+    });
   }
 
   async remove(bucket: string, key: string): Promise<void> {
-    const file = this.#object(bucket, key);
-    await rm(`${file}.json`, { force: true });
-    await rm(file, { force: true });
+    await this.#turns.run(`${bucket}/${key}`, async () => {
+      const record = await this.find(bucket, key);
+      if (!record) return;
+      await rm(this.#record(bucket, key), { force: true });
+      await rm(this.#file(bucket, record.body), { force: true });
+    });
   }
 
-  async list(bucket: string, prefix: string): Promise<ObjectRecord[]> {
+  /** All objects of a bucket by the bytes of their keys, which is the order of S3. */
+  async list(bucket: string): Promise<ObjectRecord[]> {
     const names = (await readdir(join(this.root, bucket))).filter((name) => name.endsWith(".json"));
     const records = await Promise.all(
-      names.map((name) => readJson<ObjectRecord>(join(this.root, bucket, name))),
+      names.map((name) => readRecord<ObjectRecord>(this.#file(bucket, name))),
     );
-    return records
-      .filter((record) => record !== null)
-      .filter((record) => record.key.startsWith(prefix))
-      .sort((a, b) => (a.key < b.key ? -1 : 1));
+    return records.filter((record) => record !== null).toSorted((a, b) => compareKeys(a.key, b.key));
   }
+}
 
-  async createUpload(bucket: string, key: string, type: string): Promise<string> {
-    const id = randomUUID();
-    await mkdir(this.#upload(id), { recursive: true });
-    await writeWhole(
-      join(this.#upload(id), "upload.json"),
-      JSON.stringify({ bucket, key, type } satisfies UploadRecord),
-    );
-    return id;
-  }
+function hashOf(key: string): string {
+  return createHash("sha256").update(key).digest("hex");
+}
 
-  async findUpload(bucket: string, key: string, id: string): Promise<UploadRecord> {
-    const record = await readJson<UploadRecord>(join(this.#upload(id), "upload.json"));
-    if (!record || record.bucket !== bucket || record.key !== key) throw new S3Error(404, "NoSuchUpload");
-    return record;
-  }
-
-  async putPart(id: string, n: number, request: IncomingMessage, payloadHash: string): Promise<PartRecord> {
-    const file = join(this.#upload(id), String(n));
-    const record = { n, ...(await this.#receive(request, file, payloadHash)) };
-    await writeWhole(`${file}.part.json`, JSON.stringify(record));
-    return record;
-  }
-
-  async parts(id: string): Promise<PartRecord[]> {
-    const folder = this.#upload(id);
-    const names = (await readdir(folder)).filter((name) => /^\d+\.part\.json$/.test(name));
-    const records = await Promise.all(names.map((name) => readJson<PartRecord>(join(folder, name))));
-    return records.filter((record) => record !== null).sort((a, b) => a.n - b.n);
-  }
-
-  async completeUpload(
-    id: string,
-    upload: UploadRecord,
-    wanted: readonly { n: number; etag: string }[],
-  ): Promise<ObjectRecord> {
-    const folder = this.#upload(id);
-    const stored = await this.parts(id);
-    const md5 = createHash("md5");
-    if (wanted.some(({ n }, at) => at > 0 && n <= (wanted[at - 1]?.n ?? 0)))
-      throw new S3Error(400, "InvalidPartOrder");
-    const chosen = wanted.map(({ n, etag }, at) => {
-      const part = stored.find((found) => found.n === n);
-      if (!part || part.etag.replaceAll('"', "") !== etag.replaceAll('"', ""))
-        throw new S3Error(400, "InvalidPart");
-      if (at < wanted.length - 1 && part.size < MIN_PART_BYTES) throw new S3Error(400, "EntityTooSmall");
-      md5.update(Buffer.from(part.etag.replaceAll('"', ""), "hex"));
-      return part;
-    });
-    const file = this.#object(upload.bucket, upload.key);
-    const draft = `${file}.${randomUUID()}.tmp`;
-    try {
-      for (const part of chosen)
-        await pipeline(
-          createReadStream(join(folder, String(part.n))),
-          createWriteStream(draft, { flags: "a" }),
-        );
-      await rename(draft, file);
-    } catch (error) {
-      await rm(draft, { force: true });
-      throw error;
-    }
-    const record: ObjectRecord = {
-      key: upload.key,
-      type: upload.type,
-      size: chosen.reduce((sum, part) => sum + part.size, 0),
-      etag: `"${md5.digest("hex")}-${chosen.length}"`,
-      modified: new Date().toISOString(),
-    };
-    await writeWhole(`${file}.json`, JSON.stringify(record));
-    await rm(folder, { recursive: true, force: true });
-    return record;
-  }
-
-  async abortUpload(id: string): Promise<void> {
-    await rm(this.#upload(id), { recursive: true, force: true });
-  }
+/** Orders keys by their UTF-8 bytes. */
+export function compareKeys(a: string, b: string): number {
+  return Buffer.compare(Buffer.from(a), Buffer.from(b));
 }

@@ -6,6 +6,7 @@ import { join } from "node:path";
 import { Readable } from "node:stream";
 import {
   AbortMultipartUploadCommand,
+  type CompletedPart,
   CompleteMultipartUploadCommand,
   CreateMultipartUploadCommand,
   DeleteObjectCommand,
@@ -81,7 +82,7 @@ test("what is put is got back, byte for byte, under any key", async () => {
     expect(await text(key)).toBe(`body of ${key}`);
   }
   const stored = readdirSync(join(root, Bucket));
-  expect(stored.every((name) => /^[0-9a-f]{64}(\.json)?$/.test(name))).toBe(true);
+  expect(stored.every((name) => /^[0-9a-f]{64}\.(json|[0-9a-f-]{36})$/.test(name))).toBe(true);
 });
 
 test("a stream with its checksum in a trailer arrives without the framing", async () => {
@@ -165,10 +166,12 @@ test("objects are listed by prefix, page by page", async () => {
 async function begin(Key: string) {
   const { UploadId = "" } = await s3.send(new CreateMultipartUploadCommand({ Bucket, Key }));
   const send = async (PartNumber: number, Body: Buffer) => {
-    const { ETag = "" } = await s3.send(new UploadPartCommand({ Bucket, Key, UploadId, PartNumber, Body }));
-    return { PartNumber, ETag };
+    const { ETag = "", ChecksumCRC32 } = await s3.send(
+      new UploadPartCommand({ Bucket, Key, UploadId, PartNumber, Body }),
+    );
+    return { PartNumber, ETag, ChecksumCRC32 };
   };
-  const complete = (Parts: { PartNumber: number; ETag: string }[]) =>
+  const complete = (Parts: CompletedPart[]) =>
     s3.send(new CompleteMultipartUploadCommand({ Bucket, Key, UploadId, MultipartUpload: { Parts } }));
   return { Key, UploadId, send, complete };
 }
@@ -206,7 +209,7 @@ test("an upload completes only with its own parts, in order and large enough", a
   expect(
     await codeOf(upload.complete([{ ...first, ETag: '"00000000000000000000000000000000"' }, second])),
   ).toBe("InvalidPart");
-  expect(await codeOf(upload.complete([first, { PartNumber: 3, ETag: second.ETag }]))).toBe("InvalidPart");
+  expect(await codeOf(upload.complete([first, { ...second, PartNumber: 3 }]))).toBe("InvalidPart");
   expect(await codeOf(upload.complete([second, first]))).toBe("InvalidPartOrder");
   const small = await begin("small");
   const parts = [await small.send(1, Buffer.from("tiny")), await small.send(2, Buffer.from("end"))];
