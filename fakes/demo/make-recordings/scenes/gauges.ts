@@ -118,7 +118,7 @@ export function caliper(o: { shape: "bar" | "disc" | "pad"; readout?: string; wh
         }) +
         box(right, 172, 170, 90, { c: "brass", w: 4, fill: "ground" }, 8) +
         (o.readout && open < 2 ? words(right + 85, 232, o.readout, { size: 38, heavy: true }) : "") +
-        words(960, 420, o.what, { size: 28, c: "soft" })
+        words(1030, 450, o.what, { size: 28, c: "soft" })
       );
     },
   };
