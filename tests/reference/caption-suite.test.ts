@@ -1,4 +1,4 @@
-// Caption files written by others, read where they lie: CAPTION_SUITE names the folder. They are the inputs of the
+// Caption files written by others, read where they lie, beside the project or where CAPTION_SUITE says. They are the inputs of the
 // web-platform-tests (webvtt/parsing) and of a browser maker's tests, with what a browser makes of each.
 import { existsSync, readFileSync } from "node:fs";
 import { expect, test } from "vitest";
@@ -14,7 +14,7 @@ type Entry = {
   disputed?: unknown;
 };
 
-const folder = process.env["CAPTION_SUITE"] ?? "";
+const folder = process.env["CAPTION_SUITE"] ?? "../shared/captions";
 const given = folder !== "" && existsSync(`${folder}/manifest.json`);
 const entries = given
   ? (JSON.parse(readFileSync(`${folder}/manifest.json`, "utf8")) as { tests: Entry[] }).tests.filter(
