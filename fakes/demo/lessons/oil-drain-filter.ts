@@ -2,6 +2,7 @@ import type { DemoLesson } from "../demo-lesson";
 
 export const oilDrainFilter: DemoLesson = {
   job: "oil-drain-filter",
+  captions: "oil-drain-filter.clean.vtt",
   title: "Engine oil and filter",
   summary: "Warm up, drain, filter, fill to the right mark, look for leaks, reset the interval.",
   system: "engine",

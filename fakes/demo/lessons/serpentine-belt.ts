@@ -2,6 +2,7 @@ import type { DemoLesson } from "../demo-lesson";
 
 export const serpentineBelt: DemoLesson = {
   job: "serpentine-belt",
+  captions: "serpentine-belt.clean.vtt",
   title: "Serpentine belt, tensioner and idler",
   summary:
     "Squeal on start: read the belt and tensioner, replace all three, torque, run and check the charging voltage.",
