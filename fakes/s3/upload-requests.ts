@@ -79,7 +79,8 @@ export async function listParts(call: S3Call, upload: UploadRecord): Promise<voi
     element("Key", key),
     element("UploadId", upload.id),
     element("PartNumberMarker", after),
-    element("NextPartNumberMarker", page.at(-1)?.n ?? 0),
+    // On the last page it would send the client's paginator round again.
+    isTruncated ? element("NextPartNumberMarker", page.at(-1)?.n ?? 0) : "",
     element("MaxParts", most),
     element("IsTruncated", isTruncated),
     element("StorageClass", "STANDARD"),
