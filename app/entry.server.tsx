@@ -24,7 +24,8 @@ function contentSecurityPolicy(nonce: string): string {
     `img-src 'self' data: blob: ${storage}`,
     `media-src 'self' blob: ${storage}`,
     `connect-src 'self' ${storage}`,
-    "font-src 'self'",
+    // The player's style sheet carries its icon font as data.
+    "font-src 'self' data:",
     "object-src 'none'",
     "base-uri 'self'",
     "form-action 'self'",
