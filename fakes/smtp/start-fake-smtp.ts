@@ -1,115 +1,105 @@
 // A mail server that keeps what it is given, with a small inbox page: for development and tests.
-import { randomUUID } from "node:crypto";
-import { mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
-import { createServer, type ServerResponse } from "node:http";
-import { join } from "node:path";
-import { simpleParser } from "mailparser";
+import type { Server } from "node:net";
 import { SMTPServer } from "smtp-server";
-import { inboxPage, messagePage } from "./inbox-page";
+import { inboxServer } from "./inbox-server";
+import { MailFiles, type ReceivedMail } from "./mail-files";
 
-/** One received mail. */
-export type ReceivedMail = Readonly<{
-  id: string;
-  to: string;
-  from: string;
-  subject: string;
-  text: string;
-  html: string;
-  date: string;
-  messageId: string;
+export type { ReceivedMail } from "./mail-files";
+
+export type FakeSmtpOptions = Readonly<{
+  /** 0 takes a free one. */
+  port: number;
+  /** Of the inbox page; 0 takes a free one. */
+  inboxPort: number;
+  /** Folder that keeps the mails between starts. */
+  directory: string;
 }>;
 
 export type FakeSmtp = Readonly<{
+  /** "smtp://localhost:PORT". */
   url: string;
+  /** "http://localhost:PORT". */
   inboxUrl: string;
+  /** What arrived, newest first; `to` is part of a recipient's address. */
   messages: (to?: string) => ReceivedMail[];
   close: () => Promise<void>;
 }>;
 
-function send(response: ServerResponse, status: number, type: string, body: string): void {
-  response
-    .writeHead(status, { "content-type": `${type}; charset=utf-8`, "cache-control": "no-store" })
-    .end(body);
+const LARGEST_MAIL = 25 * 1024 * 1024;
+
+/** Collects a mail; rejects one that is too large with the reply code of SMTP for it. */
+async function readMail(stream: NodeJS.ReadableStream & { sizeExceeded: boolean }): Promise<Buffer> {
+  const chunks: Buffer[] = [];
+  for await (const chunk of stream) if (!stream.sizeExceeded) chunks.push(Buffer.from(chunk));
+  if (stream.sizeExceeded)
+    throw Object.assign(new Error("The mail is larger than 25 MiB."), { responseCode: 552 });
+  return Buffer.concat(chunks);
 }
 
-/** Starts the mail server and its inbox page; port 0 takes a free one. Mails are kept as files in `directory`. */
-export async function startFakeSmtp(options: {
-  port: number;
-  inboxPort: number;
-  directory: string;
-}): Promise<FakeSmtp> {
-  const { directory } = options;
-  mkdirSync(directory, { recursive: true });
-  const kept = readdirSync(directory)
-    .filter((name) => name.endsWith(".json"))
-    .map((name) => JSON.parse(readFileSync(join(directory, name), "utf8")) as ReceivedMail)
-    .toSorted((a, b) => (a.date < b.date ? -1 : 1));
-  const messages = (to?: string) =>
-    kept
-      .filter((mail) => to === undefined || to === "" || mail.to.toLowerCase().includes(to.toLowerCase()))
-      .toReversed();
+function listen(
+  server: { once(event: "error", listener: (error: Error) => void): unknown },
+  start: (ready: () => void) => Server,
+  port: number,
+) {
+  return new Promise<number>((resolve, reject) => {
+    server.once("error", reject);
+    const listening = start(() => {
+      const address = listening.address();
+      resolve(typeof address === "object" && address ? address.port : port);
+    });
+  });
+}
 
+/** Starts the mail server, which takes any mail from anybody, and its inbox page. Rejects when a port is taken. */
+export async function startFakeSmtp(options: FakeSmtpOptions): Promise<FakeSmtp> {
+  const mails = new MailFiles(options.directory);
   const server = new SMTPServer({
+    name: "localhost",
+    banner: "This server keeps mail and sends none",
+    size: LARGEST_MAIL,
     authOptional: true,
     disabledCommands: ["STARTTLS"],
-    onAuth: (_auth, _session, done) => done(null, { user: "anybody" }),
+    closeTimeout: 200,
+    onAuth: ({ username = "" }, _session, done) => done(null, { user: username }),
     onData(stream, session, done) {
-      simpleParser(stream)
-        .then((mail) => {
-          const received: ReceivedMail = {
-            id: randomUUID(),
-            to: session.envelope.rcptTo.map(({ address }) => address).join(", "),
-            from: mail.from?.text ?? "",
-            subject: mail.subject ?? "",
-            text: mail.text ?? "",
-            html: mail.html || "",
-            date: new Date().toISOString(),
-            messageId: mail.messageId ?? "",
-          };
-          writeFileSync(join(directory, `${received.id}.json`), JSON.stringify(received));
-          kept.push(received);
-          done();
-        })
-        .catch((error: unknown) => done(error instanceof Error ? error : new Error(String(error))));
+      readMail(stream)
+        .then((raw) =>
+          mails.keep(
+            raw,
+            session.envelope.rcptTo.map(({ address }) => address),
+            Date.now(),
+          ),
+        )
+        .then(
+          ({ id }) => done(null, `Kept as ${id}`),
+          (error: unknown) => done(error instanceof Error ? error : new Error(String(error))),
+        );
     },
   });
-  const smtpPort = await new Promise<number>((resolve, reject) => {
-    server.once("error", reject);
-    const listening = server.listen(options.port, "localhost", () => {
-      const address = listening.address();
-      resolve(typeof address === "object" && address ? address.port : options.port);
-    });
-  });
+  const inbox = inboxServer(mails);
 
-  const inbox = createServer((request, response) => {
-    const url = new URL(request.url ?? "/", "http://inbox");
-    const to = url.searchParams.get("to") ?? "";
-    if (request.method === "POST" && url.pathname === "/empty") {
-      for (const mail of kept.splice(0)) rmSync(join(directory, `${mail.id}.json`), { force: true });
-      response.writeHead(303, { location: "/" }).end();
-    } else if (url.pathname === "/messages.json")
-      send(response, 200, "application/json", JSON.stringify(messages(to)));
-    else if (url.pathname === "/") send(response, 200, "text/html", inboxPage(messages(to), to));
-    else {
-      const mail = kept.find(({ id }) => url.pathname === `/${id}`);
-      if (mail) send(response, 200, "text/html", messagePage(mail));
-      else send(response, 404, "text/plain", "There is no such mail.");
-    }
-  });
-  const inboxPort = await new Promise<number>((resolve, reject) => {
-    inbox.once("error", reject);
-    inbox.listen(options.inboxPort, "localhost", () => {
-      const address = inbox.address();
-      resolve(typeof address === "object" && address ? address.port : options.inboxPort);
-    });
-  });
+  const port = await listen(server, (ready) => server.listen(options.port, "localhost", ready), options.port);
+  // A sender that hangs up in the middle of a mail is no fault of the server.
+  server.on("error", () => undefined);
+  const closeServer = () => new Promise<void>((resolve) => server.close(() => resolve()));
+  let inboxPort: number;
+  try {
+    inboxPort = await listen(
+      inbox,
+      (ready) => inbox.listen(options.inboxPort, "localhost", ready),
+      options.inboxPort,
+    );
+  } catch (error) {
+    await closeServer();
+    throw error;
+  }
   return {
-    url: `smtp://localhost:${smtpPort}`,
+    url: `smtp://localhost:${port}`,
     inboxUrl: `http://localhost:${inboxPort}`,
-    messages,
+    messages: (to) => mails.list(to),
     close: async () => {
       await Promise.all([
-        new Promise<void>((resolve) => server.close(() => resolve())),
+        closeServer(),
         new Promise<void>((resolve) => {
           inbox.close(() => resolve());
           inbox.closeAllConnections();
