@@ -67,6 +67,7 @@ export default [
       route("watched", "routes/api/watched.ts"),
       route("uploads", "routes/api/uploads.ts"),
       route("uploads/:recordingId", "routes/api/upload.ts"),
+      route("uploads/:recordingId/pictures", "routes/api/upload-pictures.ts"),
       route("recordings/:recordingId/link", "routes/api/recording-link.ts"),
     ]),
   ]),

@@ -16,9 +16,10 @@ import { setTestEnvironment } from "../../tests/support/environment";
 import { aPublishedLesson } from "../../tests/support/published-lesson";
 import { checkRecording } from "./check-recording.server";
 import { deleteRecording, listRecordings } from "./list-recordings.server";
+import { keepPictures } from "./keep-pictures.server";
 import { objectStorage } from "./object-storage.server";
 import { pictureLink, playbackLink } from "./playback-link.server";
-import { readPeaks } from "./sound-peaks";
+import { readPeaks, soundPeaks } from "./sound-peaks";
 import {
   abandonUpload,
   beginUpload,
@@ -142,7 +143,12 @@ test("the same file chosen again goes on where it was, for the same person only"
   if (!signed.ok) throw new Error(signed.sentence);
   await fetch(signed.urls[2] ?? "", { method: "PUT", body: new Uint8Array(first.partBytes) });
   const again = await beginUpload(marta, order, NOON + 1000);
-  expect(again).toEqual({ ok: true, recordingId: first.recordingId, partBytes: 16 * 1024 * 1024, done: [2] });
+  expect(again).toMatchObject({
+    ok: true,
+    recordingId: first.recordingId,
+    partBytes: 16 * 1024 * 1024,
+    done: [2],
+  });
   const other = await beginUpload(dario, order, NOON);
   expect(other.ok && other.recordingId).not.toBe(first.recordingId);
   expect(await uploadState(dario, first.recordingId)).toMatchObject({ ok: false, status: 404 });
@@ -321,4 +327,22 @@ test("a cancelled upload and one that nobody finished for a week leave nothing i
     );
     expect(again.ok && again.recordingId).not.toBe(plan.recordingId);
   }
+});
+
+test("pictures from the browser are kept where the server makes none, and nothing but pictures", async () => {
+  const { marta, dario } = aBench();
+  const id = await send(marta, good);
+  await completeUpload(marta, id, NOON);
+  const jpeg = Uint8Array.from([0xff, 0xd8, 0xff, 0xe0, 0]);
+  const made = { poster: jpeg, storyboard: jpeg, peaks: soundPeaks(new Int16Array(10)) };
+  expect(await keepPictures(dario, id, made)).toMatchObject({ ok: false, status: 404 });
+  expect(await keepPictures(marta, id, { ...made, poster: new Uint8Array(9) })).toMatchObject({
+    ok: false,
+    status: 422,
+  });
+  expect(await keepPictures(marta, id, { ...made, peaks: "x" })).toMatchObject({ ok: false, status: 422 });
+  expect(find(marta, id)?.posterKey).toBeNull();
+  expect(await keepPictures(marta, id, made)).toEqual({ ok: true });
+  expect(find(marta, id)).toMatchObject({ peaks: made.peaks });
+  expect(await pictureLink(marta, id, "poster", NOON)).not.toBeNull();
 });

@@ -17,6 +17,7 @@ import { env } from "~/env.server";
 import { addTask } from "~/queue/add-task.server";
 import type { RecordingId } from "#drizzle/schema/ids";
 import { recordings } from "#drizzle/schema/index";
+import { converterIsThere } from "./ffmpeg.server";
 import { fileProblem, partBytesOf, partsOf } from "./limits";
 import { recordingKey } from "./object-key";
 import { objectStorage, publicObjectStorage } from "./object-storage.server";
@@ -84,7 +85,14 @@ function wholeParts(row: Row, stored: readonly { n: number; size: number }[]): n
 }
 
 export type UploadOrder = { fileName: string; sizeBytes: number; lastModified: number };
-export type UploadPlan = { ok: true; recordingId: RecordingId; partBytes: number; done: number[] };
+export type UploadPlan = {
+  ok: true;
+  recordingId: RecordingId;
+  partBytes: number;
+  done: number[];
+  /** Who makes poster, storyboard and peaks: a server without a converter leaves it to the browser. */
+  picturesBy: "server" | "browser";
+};
 
 /** "GX010042.MP4" → "GX010042": a title until somebody gives a better one. */
 function titleOf(fileName: string): string {
@@ -105,6 +113,7 @@ export async function beginUpload(
 ): Promise<UploadPlan | Refused> {
   const problem = fileProblem({ sizeBytes: order.sizeBytes });
   if (problem) return { ok: false, status: 422, sentence: problem };
+  const picturesBy = (await converterIsThere()) ? "server" : "browser";
   const open = scope.db
     .select()
     .from(recordings)
@@ -123,7 +132,13 @@ export async function beginUpload(
     .get();
   const stored = open && (await storedParts(open));
   if (open && stored)
-    return { ok: true, recordingId: open.id, partBytes: open.partBytes, done: wholeParts(open, stored) };
+    return {
+      ok: true,
+      recordingId: open.id,
+      partBytes: open.partBytes,
+      done: wholeParts(open, stored),
+      picturesBy,
+    };
 
   const recordingId = ulid(now) as RecordingId;
   const objectKey = recordingKey(scope.shopId, recordingId);
@@ -163,7 +178,7 @@ export async function beginUpload(
       now,
     );
   });
-  return { ok: true, recordingId, partBytes, done: [] };
+  return { ok: true, recordingId, partBytes, done: [], picturesBy };
 }
 
 /** Where the browser puts these parts. Only part numbers that the file has are signed. */

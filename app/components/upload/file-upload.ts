@@ -1,4 +1,5 @@
 import { partsOf } from "~/recordings/limits";
+import { makePictures } from "./make-pictures";
 import type { PartSlots } from "./part-slots";
 
 export type UploadStatus =
@@ -120,11 +121,14 @@ export class FileUpload {
     try {
       const { name: fileName, size: sizeBytes, lastModified } = this.file;
       const plan = await this.#insist(() =>
-        ask<{ recordingId: string; partBytes: number; done: number[] }>("/api/uploads", {
-          fileName,
-          sizeBytes,
-          lastModified,
-        }),
+        ask<{ recordingId: string; partBytes: number; done: number[]; picturesBy: "server" | "browser" }>(
+          "/api/uploads",
+          {
+            fileName,
+            sizeBytes,
+            lastModified,
+          },
+        ),
       );
       if (this.#stopped || !plan) return;
       this.#recordingId = plan.recordingId;
@@ -141,7 +145,10 @@ export class FileUpload {
           }),
         );
         if (!closed || this.#stopped) return;
-        if (closed.ok) return this.#tell("done", "");
+        if (closed.ok) {
+          if (plan.picturesBy === "browser") await this.#sendPictures();
+          return this.#tell("done", "");
+        }
         if (!closed.missing) throw new Refused(closed.error ?? "The upload was refused.");
         for (const n of closed.missing) this.#done.delete(n);
         this.#tell("sending", "");
@@ -154,6 +161,16 @@ export class FileUpload {
             ? error.message
             : "The upload stopped. Choose the file again: it goes on where it was.",
         );
+    }
+  }
+
+  /** Without them the recording plays all the same, so a fault here is none of the upload. */
+  async #sendPictures(): Promise<void> {
+    try {
+      const body = await makePictures(this.file);
+      await fetch(`/api/uploads/${this.#recordingId}/pictures`, { method: "POST", body });
+    } catch {
+      // No poster, then.
     }
   }
 
@@ -196,7 +213,8 @@ export class FileUpload {
       } catch (error) {
         if (error instanceof Refused) throw error;
         if (this.#stopped) return undefined;
-        if (this.#status === "sending") this.#tell("waiting", NO_NETWORK);
+        // Also while it begins and while it is closed: whoever looks is told what it waits for.
+        if (["starting", "sending", "closing"].includes(this.#status)) this.#tell("waiting", NO_NETWORK);
         await wait(Math.min(15_000, 500 * 2 ** tries));
       }
     }
