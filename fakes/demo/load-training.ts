@@ -2,6 +2,7 @@
 import type { Scope } from "~/auth/scope.server";
 import { findLearnerLesson } from "~/lessons/learner-lesson.server";
 import { piecesOf } from "~/lessons/lesson-time";
+import { raiseDoubt } from "~/publishing/doubts.server";
 import { openAttempt, saveAnswer, startAttempt, submitAttempt } from "~/quizzes/attempts.server";
 import { prepareAsked } from "~/quizzes/asked";
 import { assignLesson } from "~/training/assign-lesson.server";
@@ -160,4 +161,17 @@ export function loadTraining({ scopeOf, lessonId, today }: Demo, now: number): v
     ORIGIN,
     now - DAY,
   );
+  // A trainee's doubt: it warns beside the value and waits for an instructor.
+  const gap = findLearnerLesson(scopeOf("Kofi"), lessonId("thermostat"))?.marks.find(
+    ({ mark }) => mark.component === "Expansion tank gap below the neck",
+  );
+  if (gap)
+    raiseDoubt(
+      scopeOf("Kofi"),
+      lessonId("thermostat"),
+      gap.mark.id,
+      "The sticker on the tank of the Wren in bay 3 says 25 mm.",
+      ORIGIN,
+      now - DAY,
+    );
 }
