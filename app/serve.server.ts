@@ -3,37 +3,16 @@ import compression from "compression";
 import express from "express";
 import helmet from "helmet";
 import { RateLimiterMemory } from "rate-limiter-flexible";
-import { inArray } from "drizzle-orm";
-import { users } from "#drizzle/schema/index";
+import { refuseDemoAccounts } from "./auth/demo-accounts.server";
 import { taskHandlers } from "./background.server";
 import { database } from "./db.server";
 import { env } from "./env.server";
 import { startQueue } from "./queue/run-tasks.server";
 
-const DEMO_ACCOUNTS = [
-  "owner@harrowlane.example",
-  "instructor@harrowlane.example",
-  "trainee@harrowlane.example",
-];
-
-/** Production with well-known passwords in it would be an open door. */
-function refuseDemoAccounts(): void {
-  if (env().ALLOW_DEMO_ACCOUNTS === "yes" || env().NODE_ENV !== "production") return;
-  const found = database()
-    .db.select({ id: users.id })
-    .from(users)
-    .where(inArray(users.email, DEMO_ACCOUNTS))
-    .get();
-  if (found)
-    throw new Error(
-      "This database holds the demo accounts, whose password everybody knows. Start with a database of your own.",
-    );
-}
-
 function start(): void {
   const { PORT, PUBLIC_ORIGIN } = env();
   database();
-  refuseDemoAccounts();
+  refuseDemoAccounts(database().db, env());
 
   const app = express();
   app.disable("x-powered-by");
