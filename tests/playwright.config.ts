@@ -1,21 +1,23 @@
 import { defineConfig } from "@playwright/test";
+import { PORTS } from "./support/addresses";
 
-// Fixed ports, so that the pages, the storage and the inbox are found by every journey.
-export const PORTS = { application: 4310, s3: 4311, smtp: 4312, inbox: 4313 };
 const storage = "test-results/storage";
 
 export default defineConfig({
   testDir: "./journeys",
   outputDir: "../test-results/traces",
+  globalSetup: "./support/films.ts",
   timeout: 120_000,
   expect: { timeout: 15_000 },
-  fullyParallel: false,
+  fullyParallel: true,
   workers: 2,
   retries: 0,
   forbidOnly: true,
   reporter: [["list"], ["json"]],
   use: {
     baseURL: `http://localhost:${PORTS.application}`,
+    actionTimeout: 15_000,
+    navigationTimeout: 30_000,
     trace: "retain-on-failure",
     launchOptions: {
       executablePath: "/usr/bin/chromium",

@@ -185,7 +185,9 @@ export function giveSignOff(
     if (!lesson) return { ok: false, field: "", sentence: "That lesson is not published in your shop." };
     const person = findPerson(scope, order.userId);
     if (!person) return { ok: false, field: "", sentence: "That person is not on your team any more." };
-    if (order.valuesSet.trim() === "" && lesson.marks.some(({ mark }) => mark.kind === "torque"))
+    // The form names each torque, "Pulley bolt: "; a name with nothing behind it is not written down.
+    const written = order.valuesSet.trim() !== "" && !/:[^\S\n]*$/m.test(order.valuesSet);
+    if (!written && lesson.marks.some(({ mark }) => mark.kind === "torque"))
       return {
         ok: false,
         field: "valuesSet",
