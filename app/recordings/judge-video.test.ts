@@ -26,7 +26,15 @@ test("HEVC and mixtures are converted", () => {
 });
 
 test("no picture, no length and too long are refused", () => {
-  expect(judgeVideo({ ...phone, videoCodec: null })).toMatchObject({ convert: false });
+  expect(judgeVideo({ ...phone, videoCodec: null })).toMatchObject({
+    convert: false,
+    sentence: "There is no picture in this file, only sound. Upload the video itself.",
+  });
+  // An MP4 without its index, as a camera leaves it when the battery dies, is a container with no track.
+  expect(judgeVideo({ ...phone, videoCodec: null, audioCodec: null })).toMatchObject({
+    convert: false,
+    sentence: expect.stringContaining("the recording was cut off before its end") as string,
+  });
   expect(judgeVideo({ ...phone, durationMs: 0 })).toMatchObject({ convert: false });
   expect(judgeVideo({ ...phone, durationMs: 5 * 3_600_000 })).toMatchObject({ convert: false });
 });

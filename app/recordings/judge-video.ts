@@ -20,6 +20,13 @@ const AUDIO_IN_WEBM = new Set([null, "opus", "vorbis"]);
 
 /** Whether browsers play a recording as it is: H.264 with AAC in MP4 or MOV, VP8, VP9 or AV1 with Opus in WebM. */
 export function judgeVideo(probe: Probe): Verdict {
+  if (probe.videoCodec === null && probe.audioCodec === null)
+    return {
+      plays: false,
+      convert: false,
+      sentence:
+        "This file has neither picture nor sound in it: the recording was cut off before its end. Copy it from the camera again.",
+    };
   if (probe.videoCodec === null)
     return {
       plays: false,
