@@ -43,21 +43,26 @@ export type Hit = Readonly<{
   score: number;
 }>;
 
-/** Documents that have every word, or, where none has, those that have most of them. */
-export function findDocuments(index: SearchIndex, words: readonly string[]): Hit[] {
-  if (words.length === 0) return [];
+/** What was found, and whether it has every word that was asked for. */
+export type Found = Readonly<{ hits: readonly Hit[]; complete: boolean }>;
+
+/** Documents that have every word, or, where none has, those that have most of them: the more words, the higher. */
+export function findDocuments(index: SearchIndex, words: readonly string[]): Found {
+  if (words.length === 0) return { hits: [], complete: true };
   const last = words.length - 1;
   const search = (combineWith: "AND" | "OR") =>
     index.search(words.join(" "), {
       combineWith,
       prefix: (_term, n) => n === last,
-      fuzzy: (term) => (/\d/.test(term) || term.length < 3 ? false : term.length < 8 ? 1 : 2),
-    }) as unknown as Hit[];
+      fuzzy: (term) => (/\d/.test(term) || term.length < 3 ? false : term.length < 5 ? 1 : 2),
+    }) as unknown as (Hit & { queryTerms: string[] })[];
   const all = search("AND");
-  if (all.length > 0 || words.length === 1) return all;
+  if (all.length > 0 || words.length === 1) return { hits: all, complete: true };
   // Half of the words, and never a lone one of a longer question: that would be a guess.
   const need = Math.max(2, Math.ceil(words.length / 2));
-  return (search("OR") as (Hit & { queryTerms: string[] })[]).filter(
-    (hit) => new Set(hit.queryTerms).size >= need,
-  );
+  const hits = search("OR").flatMap((hit) => {
+    const has = new Set(hit.queryTerms).size;
+    return has >= need ? [{ ...hit, score: hit.score * (has / words.length) ** 4 }] : [];
+  });
+  return { hits, complete: false };
 }

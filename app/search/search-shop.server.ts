@@ -8,7 +8,9 @@ import { sameKind } from "~/quantities/units";
 import type { Quantity } from "~/quantities/quantity";
 import { findMoments } from "./find-moments.server";
 import { readQuery, type Intent, type Query } from "./read-query";
+import { sharedComponents } from "./search-document";
 import { findDocuments, type Hit } from "./search-index";
+import { sameValue } from "./same-value";
 import { shopIndex } from "./shop-index.server";
 
 export type FoundValue = Readonly<{
@@ -19,6 +21,8 @@ export type FoundValue = Readonly<{
   found: LearnerMark;
   /** In lesson time. */
   atMs: number;
+  /** Its place among the values of the lesson. */
+  order: number;
   score: number;
 }>;
 
@@ -87,6 +91,7 @@ function rank(query: Query, text: string, hit: Pick<Hit, "score">, found: Learne
   let score = hit.score * aboutSame(text, mark);
   if (query.intent) {
     if (KINDS_OF[query.intent].includes(mark.kind)) score *= 20;
+    if (query.intent === "part" && mark.partNumber !== "") score *= 3;
     const dimension = DIMENSION_OF[query.intent];
     if (dimension) score *= mark.values.some((row) => row.dimension === dimension) ? 3 : 0.3;
   } else if (mark.kind === "torque" || mark.kind === "measure") score *= 1.5;
@@ -98,6 +103,11 @@ function rank(query: Query, text: string, hit: Pick<Hit, "score">, found: Learne
   if (mark.values.some((row) => row.role === "measured")) score *= 0.5;
   if (!mayAnswer(showing)) score *= 0.8;
   return score;
+}
+
+/** Which of two values a lesson writes down first. */
+function comesBefore(a: FoundValue, b: FoundValue): boolean {
+  return a.atMs < b.atMs || (a.atMs === b.atMs && a.order < b.order);
 }
 
 function chapterTitle(lesson: LearnerLesson["snapshot"], recordingId: string, fileMs: number): string {
@@ -129,12 +139,16 @@ export function searchShop(scope: Scope, text: string, vehicleId: string, limit:
       lesson: lesson.snapshot,
       found,
       atMs,
+      order: lesson.marks.indexOf(found),
       score,
     });
   };
 
-  const hits = findDocuments(index, query.words);
+  const { hits, complete } = findDocuments(index, query.words);
+  const namesParts = componentsIn(text).length > 0;
   for (const hit of hits) {
+    // A named part that the library does not know is not answered with another one.
+    if (!complete && namesParts && sharedComponents(text, hit.component) === 0) continue;
     const lesson = lessons.get(hit.lessonId);
     const found = hit.type === "mark" ? lesson?.marks.find(({ mark }) => mark.id === hit.markId) : undefined;
     if (lesson && found) add(lesson, found, rank(query, text, hit, found));
@@ -148,7 +162,14 @@ export function searchShop(scope: Scope, text: string, vehicleId: string, limit:
 
   values.sort((a, b) => b.score - a.score || a.atMs - b.atMs || (a.found.mark.id < b.found.mark.id ? -1 : 1));
   const best = values[0]?.score ?? 0;
-  const worth = values.filter(({ score }) => score >= best * 0.08);
+  const worth: FoundValue[] = [];
+  for (const value of values) {
+    if (value.score < best * 0.08) break;
+    const again = worth.findIndex(({ found }) => sameValue(found.mark, value.found.mark));
+    if (again < 0) worth.push(value);
+    // Said twice: the first moment stands, in the place of the better one.
+    else if (comesBefore(value, worth[again] as FoundValue)) worth[again] = value;
+  }
   const answers = worth.filter(({ lesson }) => vehicleId === "" || fitsVehicle(lesson, vehicleId));
   const elsewhere = worth.filter((value) => !answers.includes(value));
 
