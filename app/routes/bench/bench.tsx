@@ -5,6 +5,7 @@ import { EmptyState, Page, Sheet } from "~/components/ui/page";
 import { scopeContext } from "~/context";
 import { stateWords } from "~/lessons/bench-state";
 import { listBench } from "~/lessons/list-bench.server";
+import { listDoubts } from "~/publishing/doubts.server";
 import type { Route } from "./+types/bench";
 
 export function meta() {
@@ -14,7 +15,7 @@ export function meta() {
 export function loader({ context }: Route.LoaderArgs) {
   const scope = context.get(scopeContext);
   requirePermission(scope, "lesson:edit");
-  return { lessons: listBench(scope) };
+  return { lessons: listBench(scope), doubts: listDoubts(scope).open.length };
 }
 
 function count(n: number, one: string, many: string): string {
@@ -32,7 +33,7 @@ function todo(lesson: Route.ComponentProps["loaderData"]["lessons"][number]): st
   return parts.length > 0 ? parts.join(" · ") : "Nothing open";
 }
 
-export default function Bench({ loaderData: { lessons } }: Route.ComponentProps) {
+export default function Bench({ loaderData: { lessons, doubts } }: Route.ComponentProps) {
   const upload = <ButtonLink to={href("/bench/recordings/upload")}>Upload a recording</ButtonLink>;
   const create = (
     <ButtonLink look="ghost" to={href("/bench/lessons/new")}>
@@ -42,7 +43,16 @@ export default function Bench({ loaderData: { lessons } }: Route.ComponentProps)
   return (
     <Page
       title="Bench"
-      under="Lessons in work and published."
+      under={
+        <nav aria-label="On the bench" className="flex flex-wrap gap-x-6">
+          <Link to={href("/bench/recordings")} className="inline-flex min-h-11 items-center">
+            Recordings
+          </Link>
+          <Link to={href("/bench/doubts")} className="inline-flex min-h-11 items-center">
+            {doubts > 0 ? `What looks wrong: ${doubts} open` : "What looks wrong"}
+          </Link>
+        </nav>
+      }
       actions={
         lessons.length > 0 ? (
           <>
