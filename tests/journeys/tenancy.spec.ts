@@ -47,7 +47,17 @@ async function fullShop(somebody: Parameters<typeof signUpShop>[0]) {
   const trainee = await join(somebody, owner, "Theo Marsh", "trainee");
   const bench = await text(owner, `/bench/lessons/${lessonId}`);
   const markId = found(bench, `id="mark-${ID}"[\\s\\S]{0,900}?Lower link nut`, "mark");
-  const recordingId = found(await text(owner, "/bench/recordings"), `/recordings/${ID}/poster`, "recording");
+  const recordingId = found(
+    await text(owner, "/bench/recordings"),
+    `name="recording" value="${ID}"`,
+    "recording",
+  );
+  await expect
+    .poll(async () => (await owner.get(`/recordings/${recordingId}/poster`)).status(), {
+      // The demo's own recordings are prepared first.
+      timeout: 120_000,
+    })
+    .toBe(302);
 
   const captions = await owner.postMultipart(`/bench/lessons/${lessonId}/captions`, {
     recordingId,
@@ -66,19 +76,6 @@ async function fullShop(somebody: Parameters<typeof signUpShop>[0]) {
   });
   expect(second.status(), "revision 2").toBe(302);
 
-  const begun = await trainee.post(`/lessons/${lessonId}/quiz`, {});
-  const attemptPath = begun.headers()["location"] ?? "";
-  const attemptId = found(attemptPath, ID, "attempt");
-  const versionId = found(
-    await text(trainee, attemptPath),
-    `name="question" value="${ID}"`,
-    "version of a question",
-  );
-  const questionId = found(
-    await text(owner, `/bench/lessons/${lessonId}/questions`),
-    `name="question" value="${ID}"`,
-    "question",
-  );
   const assigned = await owner.post("/training/assign", {
     lesson: lessonId,
     person: found(
@@ -131,6 +128,37 @@ async function fullShop(somebody: Parameters<typeof signUpShop>[0]) {
   expect(raised.status(), "doubt").toBe(302);
   const doubtId = found(await text(owner, "/bench/doubts"), `/bench/doubts/${ID}`, "doubt");
 
+  // After the last revision: an attempt belongs to the revision that it began with.
+  const begin = async () => {
+    const begun = await trainee.post(`/lessons/${lessonId}/quiz`, {});
+    const path = begun.headers()["location"] ?? "";
+    const page = await text(trainee, path);
+    return {
+      id: found(path, ID, "attempt"),
+      path,
+      question: found(page, `name="question" value="${ID}"`, "question"),
+    };
+  };
+  const finished = await begin();
+  const count = Number(/Question 1 of (?:<!-- -->)?(\d+)/.exec(await text(trainee, finished.path))?.[1]);
+  for (let n = 1; n <= count; n += 1) {
+    const open = await text(trainee, `${finished.path}?question=${n}`);
+    const answered = await trainee.post(finished.path, {
+      question: found(open, `name="question" value="${ID}"`, "question"),
+      text: "65 lbf·ft",
+      unit: "",
+      next: "review",
+    });
+    expect(answered.status(), "answer").toBe(302);
+  }
+  const submitted = await trainee.post(`${finished.path}/review`, {});
+  expect(submitted.headers()["location"], "result").toMatch(/\/result$/);
+  const { id: attemptId, question: versionId } = await begin();
+  const questionId = found(
+    await text(owner, `/bench/lessons/${lessonId}/questions`),
+    `name="question" value="${ID}"`,
+    "question",
+  );
   await owner.post("/team", {
     intent: "invite",
     name: "Nora",
@@ -154,12 +182,21 @@ async function fullShop(somebody: Parameters<typeof signUpShop>[0]) {
     owner,
     trainee,
     ids,
+    finished: finished.id,
     more: { versionId, questionId, assignmentId, signOffId, requestId, invitationId, anyUserId: userId },
     form: { version, chapterId: [...chapters.values()][0] ?? "" },
   };
 }
 
 type Shop = Awaited<ReturnType<typeof fullShop>>;
+
+/** The address of a route with the ids of a shop. */
+function addressOf(route: BuiltRoute, { ids, finished }: Pick<Shop, "ids" | "finished">): string {
+  const attemptId = route.id === "routes/training/attempt-result" ? finished : ids.attemptId;
+  return (
+    fill(route.path, { ...ids, attemptId }) + (route.id === "routes/bench/mark-new" ? "?kind=torque" : "")
+  );
+}
 
 /** What each route that takes a form is posted: what would change something if the shop did not matter. */
 function bodies({ ids, more, form }: Shop): Record<string, Body> {
@@ -227,7 +264,7 @@ test("a person of another shop gets 404 for every id on every route, by GET and 
   somebody,
   signedIn,
 }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(300_000);
   const shop = await fullShop(somebody);
   const before = await recordOf(shop);
   const posted = bodies(shop);
@@ -237,7 +274,7 @@ test("a person of another shop gets 404 for every id on every route, by GET and 
   // The addresses are right: the shop's own people are let in.
   for (const route of routes.filter(({ hasLoader }) => hasLoader)) {
     const who = route.id.startsWith("routes/training/attempt") ? shop.trainee : shop.owner;
-    const status = (await who.get(fill(route.path, shop.ids))).status();
+    const status = (await who.get(addressOf(route, shop))).status();
     expect([200, 302], `own ${route.path}`).toContain(status);
   }
 
@@ -250,7 +287,7 @@ test("a person of another shop gets 404 for every id on every route, by GET and 
       ]),
     );
     for (const route of routes) {
-      const path = fill(route.path, shop.ids);
+      const path = addressOf(route, shop);
       if (route.hasLoader) {
         const [theirs, missing] = [await stranger.get(path), await stranger.get(fill(route.path, never))];
         expect(theirs.status(), `GET ${path}`).toBe(404);
@@ -271,7 +308,7 @@ test("ids of another shop inside a form are a missing thing, or a sentence", asy
   somebody,
   signedIn,
 }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(300_000);
   const shop = await fullShop(somebody);
   const before = await recordOf(shop);
   const { ids, more } = shop;
@@ -371,7 +408,7 @@ const OUTSIDE = ["routes/auth/", "routes/api/health", "routes/not-found"];
 test("a trainee gets 403 on the pages of instructors and owners, an instructor on those of owners", async ({
   somebody,
 }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(300_000);
   const shop = await fullShop(somebody);
   const instructor = await join(somebody, shop.owner, "Ivo Lang", "instructor");
   const posted = bodies(shop);
@@ -381,7 +418,7 @@ test("a trainee gets 403 on the pages of instructors and owners, an instructor o
   );
   expect(forTeachers.length + FOR_EVERYBODY.length).toBe(routes.length);
   for (const route of forTeachers) {
-    const path = fill(route.path, shop.ids);
+    const path = addressOf(route, shop);
     const ownersOnly = FOR_OWNERS.includes(route.id);
     if (route.hasLoader) {
       expect((await shop.trainee.get(path)).status(), `trainee GET ${path}`).toBe(403);

@@ -23,7 +23,7 @@ export function routesOfBuild(): BuiltRoute[] {
   const script = readFileSync(`${folder}/${name}`, "utf8");
   const { routes } = JSON.parse(script.slice(script.indexOf("{"), script.lastIndexOf("}") + 1)) as Manifest;
   return Object.values(routes)
-    .filter(({ path, index }) => path !== undefined || index === true)
+    .filter(({ id, path, index }) => id !== "root" && (path !== undefined || index === true))
     .map(({ id, parentId, path, hasAction, hasLoader }) => ({
       id,
       path: `/${path ?? ""}`,

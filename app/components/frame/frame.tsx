@@ -87,7 +87,7 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
                 to={place.to}
                 end={place.to === "/"}
                 className={({ isActive }) =>
-                  `flex min-h-11 items-center rounded px-3 font-semibold whitespace-nowrap text-on-graphite no-underline ${isActive ? "bg-enamel" : "hover:bg-enamel/60"}`
+                  `flex min-h-11 items-center rounded px-3 font-semibold whitespace-nowrap no-underline ${isActive ? "bg-enamel text-on-enamel" : "text-on-graphite hover:bg-enamel/60"}`
                 }
               >
                 {place.label}
