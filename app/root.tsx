@@ -1,9 +1,10 @@
-import { isRouteErrorResponse, Links, Meta, Outlet, Scripts, ScrollRestoration } from "react-router";
+import { Links, Meta, Outlet, Scripts, ScrollRestoration } from "react-router";
 import { database } from "~/db.server";
 import { env } from "~/env.server";
 import { requireSameOrigin } from "~/auth/same-origin.server";
 import { anonymousContext } from "~/context";
 import { ErrorPage } from "~/components/frame/error-page";
+import { explainError } from "~/components/frame/explain-error";
 import type { Route } from "./+types/root";
 import "./app.css";
 
@@ -45,14 +46,5 @@ export default function Root() {
 }
 
 export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
-  return (
-    <ErrorPage
-      {...(isRouteErrorResponse(error) && error.status < 500
-        ? { status: error.status, sentence: String(error.data) }
-        : {
-            status: 500,
-            sentence: "Something broke on our side. Your work up to the last save is kept. Try again.",
-          })}
-    />
-  );
+  return <ErrorPage {...explainError(error)} />;
 }

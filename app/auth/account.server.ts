@@ -64,7 +64,9 @@ export async function changePassword(
 export function endDevice(scope: Scope, sessionId: SessionId): boolean {
   const { changes } = scope.db
     .delete(sessions)
-    .where(and(eq(sessions.userId, scope.userId), eq(sessions.id, sessionId)))
+    .where(
+      and(eq(sessions.shopId, scope.shopId), eq(sessions.userId, scope.userId), eq(sessions.id, sessionId)),
+    )
     .run();
   return changes === 1;
 }

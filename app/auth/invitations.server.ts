@@ -1,5 +1,5 @@
-import { and, desc, eq, gt, isNull } from "drizzle-orm";
-import { inTransaction } from "~/db.server";
+import { and, desc, eq, isNotNull, isNull } from "drizzle-orm";
+import { inTransaction, type Database } from "~/db.server";
 import { invitationMessage } from "~/mail/invitation-message";
 import { queueMail } from "~/mail/queue-mail.server";
 import type { InvitationId, UserId } from "#drizzle/schema/ids";
@@ -11,9 +11,20 @@ import { hashSecret, newSecret } from "./secret.server";
 import { writeAudit } from "./write-audit.server";
 
 const LIFETIME_MS = 14 * 86_400_000;
-const TAKEN = "That e-mail already has an account with Castlenut; it cannot be invited.";
+const TAKEN = "That e-mail already has an account with Castlenut; it can't be invited twice.";
 
 type Invited = { name: string; email: string; role: Role };
+
+/** Whether anybody, in whatever shop, signs in with this address. Those who left do not. */
+function hasAccount(db: Database, email: string): boolean {
+  return (
+    db
+      .select({ id: users.id })
+      .from(users)
+      .where(and(eq(users.email, email), isNull(users.leftAt)))
+      .get() !== undefined
+  );
+}
 
 function mail(scope: Scope, to: Invited, secret: string, publicOrigin: string, now: number): void {
   const shop =
@@ -42,13 +53,7 @@ export function invite(
   now: number,
 ): { ok: true } | { ok: false; sentence: string } {
   return inTransaction(scope, (scope) => {
-    const user = scope.db
-      .select({ shopId: users.shopId, leftAt: users.leftAt })
-      .from(users)
-      .where(eq(users.email, order.email))
-      .get();
-    if (user && (user.leftAt === null || user.shopId !== scope.shopId))
-      return { ok: false as const, sentence: TAKEN };
+    if (hasAccount(scope.db, order.email)) return { ok: false as const, sentence: TAKEN };
     const secret = newSecret();
     scope.db
       .update(invitations)
@@ -142,9 +147,9 @@ export function withdrawInvitation(scope: Scope, id: InvitationId, now: number):
   });
 }
 
-/** The invitation behind a link; undefined when it is used, withdrawn, too old or unknown. */
+/** The invitation behind a link: open, or why it is worth nothing. `unknown` also when a newer mail has replaced the link. */
 export function findInvitation(from: Anonymous, token: string, now: number) {
-  return from.db
+  const row = from.db
     .select({
       id: invitations.id,
       shopId: invitations.shopId,
@@ -152,21 +157,23 @@ export function findInvitation(from: Anonymous, token: string, now: number) {
       name: invitations.name,
       email: invitations.email,
       role: invitations.role,
+      acceptedAt: invitations.acceptedAt,
+      withdrawnAt: invitations.withdrawnAt,
+      expiresAt: invitations.expiresAt,
     })
     .from(invitations)
     .innerJoin(shops, eq(shops.id, invitations.shopId))
-    .where(
-      and(
-        eq(invitations.tokenHash, hashSecret(token)),
-        isNull(invitations.acceptedAt),
-        isNull(invitations.withdrawnAt),
-        gt(invitations.expiresAt, now),
-      ),
-    )
+    .where(eq(invitations.tokenHash, hashSecret(token)))
     .get();
+  if (!row) return { state: "unknown" as const };
+  const { acceptedAt, withdrawnAt, expiresAt, ...invited } = row;
+  if (acceptedAt !== null) return { state: "accepted" as const };
+  if (withdrawnAt !== null) return { state: "withdrawn" as const };
+  if (expiresAt <= now) return { state: "expired" as const };
+  return { state: "open" as const, ...invited };
 }
 
-/** Accepts an invitation, once. Somebody who left and was invited again gets their former row, and with it their records. */
+/** Accepts an invitation, once; undefined when it is not open. Somebody who left and was invited again gets their former row, and with it their records. */
 export async function acceptInvitation(
   from: Anonymous,
   token: string,
@@ -174,13 +181,18 @@ export async function acceptInvitation(
   now: number,
   cost = PASSWORD_COST,
 ): Promise<{ ok: true; userId: UserId } | { ok: false; sentence: string } | undefined> {
+  // Looked at before the hash too: a made-up link costs nothing.
+  if (findInvitation(from, token, now).state !== "open") return undefined;
   const passwordHash = await hashPassword(given.password, cost);
   return inTransaction(from, (from) => {
     const found = findInvitation(from, token, now);
-    if (!found) return undefined;
-    const former = from.db.select().from(users).where(eq(users.email, found.email)).get();
-    if (former && (former.leftAt === null || former.shopId !== found.shopId))
-      return { ok: false as const, sentence: TAKEN };
+    if (found.state !== "open") return undefined;
+    if (hasAccount(from.db, found.email)) return { ok: false as const, sentence: TAKEN };
+    const former = from.db
+      .select({ id: users.id })
+      .from(users)
+      .where(and(eq(users.shopId, found.shopId), eq(users.email, found.email), isNotNull(users.leftAt)))
+      .get();
     const entry = { name: given.name, role: found.role, passwordHash };
     const userId = former
       ? former.id

@@ -8,6 +8,7 @@ import { hashPassword, PASSWORD_COST } from "./password.server";
 import type { Anonymous } from "./scope.server";
 import { hashSecret, newSecret } from "./secret.server";
 import { endSessionsOf } from "./session.server";
+import { forgetTries } from "./sign-in.server";
 
 const LIFETIME_MS = 2 * 3_600_000;
 const MOST_PER_HOUR = 3;
@@ -71,7 +72,7 @@ export function findReset(
     .get();
 }
 
-/** Sets a new password by a link, once, and ends every session of the person. */
+/** Sets a new password by a link, once, and ends every session of the person. Undefined: the link is worth nothing. */
 export async function resetPassword(
   from: Anonymous,
   token: string,
@@ -79,14 +80,18 @@ export async function resetPassword(
   now: number,
   cost = PASSWORD_COST,
 ): Promise<UserId | undefined> {
+  // Looked at before the hash too: a made-up link costs nothing.
+  if (!findReset(from, token, now)) return undefined;
   const passwordHash = await hashPassword(password, cost);
-  return inTransaction(from, (from) => {
+  const done = inTransaction(from, (from) => {
     const found = findReset(from, token, now);
     if (!found) return undefined;
     from.db.update(users).set({ passwordHash }).where(eq(users.id, found.userId)).run();
     // Every other link of this person ends with it.
     from.db.update(passwordResets).set({ usedAt: now }).where(eq(passwordResets.userId, found.userId)).run();
     endSessionsOf(from, found.userId);
-    return found.userId;
+    return found;
   });
+  if (done) await forgetTries(done.email);
+  return done?.userId;
 }

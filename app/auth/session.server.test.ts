@@ -53,6 +53,28 @@ test("a session ends after 90 days without a visit, and lives on with visits", a
   expect(await readSession({ db }, request(cookie), NOON + 269 * DAY)).toBeUndefined();
 });
 
+test("a visit prolongs the cookie too, not more often than needed, and it opens the same session", async () => {
+  const { db, cookie } = await signedIn();
+  expect((await readSession({ db }, request(cookie), NOON + 60_000))?.renewedCookie).toBeUndefined();
+  const later = await readSession({ db }, request(cookie), NOON + DAY);
+  expect(later?.renewedCookie).toMatch(/^__Host-castlenut=.*Max-Age=7776000/); // 90 days
+  const renewed = later?.renewedCookie?.split(";")[0];
+  expect((await readSession({ db }, request(renewed), NOON + DAY))?.sessionId).toBe(later?.sessionId);
+});
+
+test("when a person was last seen outlives the session", async () => {
+  const { db, scope, cookie } = await signedIn();
+  await readSession({ db }, request(cookie), NOON + DAY);
+  await endSession({ db }, request(cookie));
+  expect(db.select().from(users).where(eq(users.id, scope.userId)).get()?.lastSeenAt).toBe(NOON + DAY);
+});
+
+test("signing in clears away the person's expired sessions", async () => {
+  const { db, scope } = await signedIn();
+  await startSession({ db }, scope.userId, request(), NOON + 91 * DAY);
+  expect(db.select().from(sessions).all()).toHaveLength(1);
+});
+
 test("signing in again renews the session of this device; signing out kills it", async () => {
   const { db, scope, cookie } = await signedIn();
   const renewed = (await startSession({ db }, scope.userId, request(cookie), NOON)).split(";")[0] ?? "";

@@ -1,6 +1,6 @@
-import { and, eq, gt, isNull, ne } from "drizzle-orm";
+import { and, eq, gt, isNull, lte, ne } from "drizzle-orm";
 import { createCookie } from "react-router";
-import type { Database } from "~/db.server";
+import { inTransaction, type Database } from "~/db.server";
 import { env } from "~/env.server";
 import type { SessionId, UserId } from "#drizzle/schema/ids";
 import { sessions, shops, users } from "#drizzle/schema/index";
@@ -42,23 +42,27 @@ export async function startSession(
   const secret = newSecret();
   const user = from.db.select({ shopId: users.shopId }).from(users).where(eq(users.id, userId)).get();
   if (!user) throw new Error("a session needs a user");
-  if (former)
-    from.db
-      .delete(sessions)
-      .where(eq(sessions.tokenHash, hashSecret(former)))
+  inTransaction(from, ({ db }) => {
+    if (former)
+      db.delete(sessions)
+        .where(eq(sessions.tokenHash, hashSecret(former)))
+        .run();
+    db.delete(sessions)
+      .where(and(eq(sessions.userId, userId), lte(sessions.expiresAt, now)))
       .run();
-  from.db
-    .insert(sessions)
-    .values({
-      shopId: user.shopId,
-      userId,
-      tokenHash: hashSecret(secret),
-      device: (request.headers.get("User-Agent") ?? "").slice(0, 200),
-      createdAt: now,
-      lastSeenAt: now,
-      expiresAt: now + LIFETIME_MS,
-    })
-    .run();
+    db.insert(sessions)
+      .values({
+        shopId: user.shopId,
+        userId,
+        tokenHash: hashSecret(secret),
+        device: (request.headers.get("User-Agent") ?? "").slice(0, 200),
+        createdAt: now,
+        lastSeenAt: now,
+        expiresAt: now + LIFETIME_MS,
+      })
+      .run();
+    db.update(users).set({ lastSeenAt: now }).where(eq(users.id, userId)).run();
+  });
   return sessionCookie().serialize(secret);
 }
 
@@ -81,7 +85,13 @@ export function endSessionsOf(from: Readonly<{ db: Database }>, userId: UserId, 
     .run();
 }
 
-export type SignedIn = Readonly<{ scope: Scope; viewer: Viewer; sessionId: SessionId }>;
+export type SignedIn = Readonly<{
+  scope: Scope;
+  viewer: Viewer;
+  sessionId: SessionId;
+  /** Set-Cookie for the answer when the session was prolonged, else the browser would drop the cookie before its time. */
+  renewedCookie: string | undefined;
+}>;
 
 /** Who sends this request; undefined when nobody is signed in. */
 export async function readSession(
@@ -100,14 +110,18 @@ export async function readSession(
     .get();
   if (!row) return undefined;
   const { session, user, shop } = row;
-  if (now - session.lastSeenAt > RENEW_SEEN_AFTER_MS)
-    from.db
-      .update(sessions)
-      .set({ lastSeenAt: now, expiresAt: now + LIFETIME_MS })
-      .where(eq(sessions.id, session.id))
-      .run();
+  const prolong = now - session.lastSeenAt > RENEW_SEEN_AFTER_MS;
+  if (prolong)
+    inTransaction(from, ({ db }) => {
+      db.update(sessions)
+        .set({ lastSeenAt: now, expiresAt: now + LIFETIME_MS })
+        .where(eq(sessions.id, session.id))
+        .run();
+      db.update(users).set({ lastSeenAt: now }).where(eq(users.id, user.id)).run();
+    });
   return {
     sessionId: session.id,
+    renewedCookie: prolong ? await sessionCookie().serialize(secret) : undefined,
     scope: { db: from.db, shopId: user.shopId, userId: user.id, role: user.role },
     viewer: {
       userId: user.id,

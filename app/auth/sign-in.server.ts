@@ -7,8 +7,13 @@ import type { UserId } from "#drizzle/schema/ids";
 import { passwordFits } from "./password.server";
 import type { Anonymous } from "./scope.server";
 
-// Failures only, per address tried: guessing is slowed, a forgotten password is not punished for long.
-const failures = new RateLimiterMemory({ points: 10, duration: 15 * 60 });
+// Per address tried, forgotten when the right password comes: guessing is slowed, a forgotten password is not punished for long.
+const tries = new RateLimiterMemory({ points: 10, duration: 15 * 60 });
+
+/** Opens the door again for an address, after its password was reset. */
+export async function forgetTries(email: string): Promise<void> {
+  await tries.delete(email);
+}
 
 export class SignInRefused extends Error {}
 
@@ -24,18 +29,17 @@ export function signInAuthenticator(from: Anonymous): Authenticator<UserId> {
         .trim()
         .toLowerCase();
       const password = String(form.get("password") ?? "");
-      const tried = await failures.get(email);
-      if (tried !== null && tried.remainingPoints <= 0) throw new SignInRefused(TOO_MANY);
+      // Counted before the password is looked at, so that many tries at the same moment count too.
+      await tries.consume(email).catch(() => {
+        throw new SignInRefused(TOO_MANY);
+      });
       const user = from.db
         .select({ id: users.id, passwordHash: users.passwordHash })
         .from(users)
         .where(and(eq(users.email, email), isNull(users.leftAt)))
         .get();
-      if (!(await passwordFits(password, user?.passwordHash)) || !user) {
-        await failures.consume(email).catch(() => undefined);
-        throw new SignInRefused(REFUSED);
-      }
-      await failures.delete(email);
+      if (!(await passwordFits(password, user?.passwordHash)) || !user) throw new SignInRefused(REFUSED);
+      await forgetTries(email);
       return user.id;
     }),
     "form",

@@ -1,7 +1,7 @@
-import { and, asc, count, eq, isNull, max } from "drizzle-orm";
+import { and, asc, count, eq, isNull } from "drizzle-orm";
 import { inTransaction } from "~/db.server";
 import type { UserId } from "#drizzle/schema/ids";
-import { sessions, users } from "#drizzle/schema/index";
+import { users } from "#drizzle/schema/index";
 import type { Role } from "./permissions";
 import type { Scope } from "./scope.server";
 import { endSessionsOf } from "./session.server";
@@ -17,12 +17,10 @@ export function listTeam(scope: Scope) {
       role: users.role,
       createdAt: users.createdAt,
       leftAt: users.leftAt,
-      lastSeenAt: max(sessions.lastSeenAt),
+      lastSeenAt: users.lastSeenAt,
     })
     .from(users)
-    .leftJoin(sessions, eq(sessions.userId, users.id))
     .where(eq(users.shopId, scope.shopId))
-    .groupBy(users.id)
     .orderBy(asc(users.name))
     .all();
   return {
@@ -71,7 +69,7 @@ export function changeRole(scope: Scope, userId: UserId, role: Role, now: number
   });
 }
 
-/** A person leaves: signed out everywhere, kept in the records. Invited again, they get this very row back. */
+/** A person leaves: signed out everywhere, kept in the records. The address is free again; invited by this shop again, they get this very row back. */
 export function removePerson(scope: Scope, userId: UserId, now: number): TeamEdit {
   return inTransaction(scope, (scope): TeamEdit => {
     const person = findMember(scope, userId);

@@ -14,6 +14,10 @@ export function Door({
     <div className="grid min-h-dvh content-start lg:grid-cols-[minmax(0,5fr)_minmax(0,7fr)] lg:content-stretch">
       <header className="bg-enamel-deep px-6 py-6 text-on-graphite lg:px-12 lg:py-16">
         <Brand />
+        <p className="mt-3 max-w-md text-sm lg:hidden">
+          A shop's own recordings turned into training: every value with its source, checked by a second
+          person.
+        </p>
         <p className="mt-4 hidden max-w-md text-lg lg:block">
           A shop films its own jobs. Castlenut turns them into training that can be trusted at the car: every
           torque, tool size, measurement and caution at its second of video, with its source, checked by a

@@ -12,3 +12,8 @@ export function localTime(at: number, timeZone: string): string {
   const part = (type: string) => parts.find((found) => found.type === type)?.value ?? "";
   return `${part("day")} ${part("month").slice(0, 3)} ${part("year")}, ${part("hour")}:${part("minute")}`;
 }
+
+/** Its day alone: "12 Nov 2026". */
+export function localDay(at: number, timeZone: string): string {
+  return localTime(at, timeZone).split(",")[0] ?? "";
+}

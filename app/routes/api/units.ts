@@ -1,5 +1,6 @@
 import { redirect } from "react-router";
 import { z } from "zod";
+import { localPath } from "~/auth/local-path";
 import { setUnits } from "~/auth/set-units.server";
 import { scopeContext } from "~/context";
 import { parseForm } from "~/forms/parse-form";
@@ -7,10 +8,7 @@ import type { Route } from "./+types/units";
 
 const Units = z.object({
   units: z.enum(["metric", "inch"]),
-  to: z
-    .string()
-    .regex(/^\/(?!\/)/)
-    .catch("/"),
+  to: z.string().catch("/").transform(localPath),
 });
 
 /** The switch in the frame: which unit comes first for this person. */

@@ -3,7 +3,7 @@ import { z } from "zod";
 import { nameField } from "~/auth/email";
 import { acceptInvitation, findInvitation } from "~/auth/invitations.server";
 import { newPassword } from "~/auth/password";
-import { startSession } from "~/auth/session.server";
+import { readSession, startSession } from "~/auth/session.server";
 import { Door } from "~/components/frame/door";
 import { Button } from "~/components/ui/button";
 import { Field, FormProblem } from "~/components/ui/field";
@@ -17,11 +17,13 @@ export function meta() {
   return [{ title: "Join the shop · Castlenut" }];
 }
 
-export function loader({ params, context }: Route.LoaderArgs) {
-  const found = findInvitation(context.get(anonymousContext), params.token, Date.now());
-  return {
-    invited: found ? { shop: found.shop, name: found.name, email: found.email, role: found.role } : null,
-  };
+export async function loader({ request, params, context }: Route.LoaderArgs) {
+  const [from, now] = [context.get(anonymousContext), Date.now()];
+  const found = findInvitation(from, params.token, now);
+  if (found.state !== "open") return { state: found.state };
+  const { state, shop, name, email, role } = found;
+  const signedIn = await readSession(from, request, now);
+  return { state, shop, name, email, role, signedInAs: signedIn?.viewer.name ?? null };
 }
 
 export async function action({ request, params, context }: Route.ActionArgs) {
@@ -36,14 +38,25 @@ export async function action({ request, params, context }: Route.ActionArgs) {
   return redirect(href("/"), { headers: { "Set-Cookie": cookie } });
 }
 
-export default function Invitation({ loaderData: { invited }, actionData }: Route.ComponentProps) {
-  if (!invited)
+const CLOSED = {
+  accepted: "It was used already. If that was you, sign in with the password you chose.",
+  withdrawn: "The shop withdrew it, or sent you a newer one. Look for a newer mail, or ask the shop's owner.",
+  expired: "It is older than 14 days. Ask the shop's owner to send it again.",
+  unknown: "The link is not complete, or a newer mail has replaced it. Open the link of the newest mail.",
+};
+
+export default function Invitation({ loaderData: invited, actionData }: Route.ComponentProps) {
+  if (invited.state !== "open")
     return (
-      <Door title="This invitation does not work any more">
-        <p>
-          It was accepted, withdrawn, or is older than 14 days. Ask the shop's owner to send it again, or{" "}
-          <Link to={href("/sign-in")}>sign in</Link>.
-        </p>
+      <Door
+        title="This invitation does not work any more"
+        foot={
+          <Link to={href("/sign-in")} className="inline-flex min-h-11 items-center">
+            Sign in
+          </Link>
+        }
+      >
+        <p>{CLOSED[invited.state]}</p>
       </Door>
     );
   return (
@@ -53,6 +66,11 @@ export default function Invitation({ loaderData: { invited }, actionData }: Rout
         <p>
           You are invited as {invited.role} with {invited.email}.
         </p>
+        {invited.signedInAs === null ? null : (
+          <p>
+            {invited.signedInAs} is signed in on this device. Joining signs {invited.signedInAs} out here.
+          </p>
+        )}
         <Field
           label="Your name"
           name="name"

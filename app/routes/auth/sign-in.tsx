@@ -1,21 +1,27 @@
 import { data, Form, href, Link, redirect } from "react-router";
+import { z } from "zod";
+import { localPath } from "~/auth/local-path";
 import { readSession, startSession } from "~/auth/session.server";
 import { signInAuthenticator, SignInRefused } from "~/auth/sign-in.server";
 import { Door } from "~/components/frame/door";
 import { Button } from "~/components/ui/button";
 import { Field, FormProblem } from "~/components/ui/field";
 import { anonymousContext } from "~/context";
-import { refuse } from "~/forms/parse-form";
+import { parseForm, refuse } from "~/forms/parse-form";
 import type { Route } from "./+types/sign-in";
 
 export function meta() {
   return [{ title: "Sign in · Castlenut" }];
 }
 
-/** Only a page of our own, never another site. */
-function localPath(text: string | null): string {
-  return text !== null && /^\/(?![/\\])/.test(text) ? text : href("/");
-}
+const Entry = z.object({
+  email: z
+    .string("Type your e-mail address.")
+    .trim()
+    .min(1, "Type your e-mail address.")
+    .max(254, "This e-mail address is too long."),
+  password: z.string("Type your password.").min(1, "Type your password."),
+});
 
 export async function loader({ request, context, url }: Route.LoaderArgs) {
   const to = localPath(url.searchParams.get("to"));
@@ -25,14 +31,16 @@ export async function loader({ request, context, url }: Route.LoaderArgs) {
 
 export async function action({ request, context, url }: Route.ActionArgs) {
   const from = context.get(anonymousContext);
-  const copy = request.clone();
+  const fields = await request.clone().formData();
+  const form = parseForm(Entry, fields);
+  if (!form.ok) return data(form, { status: 400 });
   try {
     const userId = await signInAuthenticator(from).authenticate("form", request);
     const cookie = await startSession(from, userId, request, Date.now());
     return redirect(localPath(url.searchParams.get("to")), { headers: { "Set-Cookie": cookie } });
   } catch (error) {
     if (!(error instanceof SignInRefused)) throw error;
-    return data(refuse(await copy.formData(), { "": error.message }), { status: 400 });
+    return data(refuse(fields, { "": error.message }), { status: 400 });
   }
 }
 

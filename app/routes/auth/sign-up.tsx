@@ -8,16 +8,13 @@ import { Door } from "~/components/frame/door";
 import { Button } from "~/components/ui/button";
 import { Field, FormProblem, Select } from "~/components/ui/field";
 import { anonymousContext } from "~/context";
+import { oneLine } from "~/forms/one-line";
 import { parseForm, refuse } from "~/forms/parse-form";
 import { COUNTRIES, COUNTRY_CODES, TIME_ZONES } from "~/shops/country";
 import type { Route } from "./+types/sign-up";
 
 const NewShop = z.object({
-  shopName: z
-    .string("Name your shop.")
-    .trim()
-    .min(1, "Name your shop.")
-    .max(80, "Keep the name under 80 characters."),
+  shopName: oneLine("Name your shop."),
   country: z.enum(COUNTRY_CODES, "Choose a country."),
   timeZone: z.enum(["", ...TIME_ZONES], "Choose a time zone."),
   name: nameField,
@@ -36,6 +33,7 @@ export async function loader({ request, context }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const from = context.get(anonymousContext);
+  if (await readSession(from, request, Date.now())) return redirect(href("/"));
   const fields = await request.formData();
   const form = parseForm(NewShop, fields);
   if (!form.ok) return data(form, { status: 400 });

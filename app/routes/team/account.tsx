@@ -201,7 +201,7 @@ export default function Account({ loaderData, actionData }: Route.ComponentProps
                 <Form method="post">
                   <input type="hidden" name="device" value={device.id} />
                   <Button name="intent" value="end-device" look="quiet">
-                    Sign that device out
+                    Sign out that device
                   </Button>
                 </Form>
               )}

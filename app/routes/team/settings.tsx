@@ -5,6 +5,7 @@ import { Button } from "~/components/ui/button";
 import { Field, FormProblem, Select } from "~/components/ui/field";
 import { Page, Remark, Sheet } from "~/components/ui/page";
 import { scopeContext } from "~/context";
+import { oneLine } from "~/forms/one-line";
 import { parseForm } from "~/forms/parse-form";
 import { COUNTRIES, COUNTRY_CODES, TIME_ZONES } from "~/shops/country";
 import { loadShop, saveShop } from "~/shops/shop-settings.server";
@@ -19,7 +20,7 @@ const percent = (least: number) =>
     .transform((value) => value / 100);
 
 const Settings = z.object({
-  name: z.string().trim().min(1, "Name your shop.").max(80, "Keep the name under 80 characters."),
+  name: oneLine("Name your shop."),
   country: z.enum(COUNTRY_CODES, "Choose a country."),
   timeZone: z.enum(TIME_ZONES, "Choose a time zone."),
   preferredUnits: z.enum(["metric", "inch"], "Choose which unit comes first."),

@@ -7,7 +7,7 @@ import { notFound, requirePermission } from "~/auth/require.server";
 import { changeRole, listTeam, removePerson } from "~/auth/team.server";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { Field, FormProblem, Select } from "~/components/ui/field";
-import { localTime } from "~/components/ui/local-time";
+import { localDay, localTime } from "~/components/ui/local-time";
 import { Page, Remark, Sheet } from "~/components/ui/page";
 import { scopeContext, viewerContext } from "~/context";
 import { env } from "~/env.server";
@@ -107,8 +107,8 @@ function PersonRow({
           <p className="font-semibold">{person.name}</p>
           <p className="text-sm break-all text-ink-soft">{person.email}</p>
           <p className="text-sm text-ink-soft">
-            {person.role},{" "}
-            {person.lastSeenAt ? `last seen ${localTime(person.lastSeenAt, timeZone)}` : "not signed in now"}
+            {person.role}, on the team since {localDay(person.createdAt, timeZone)},{" "}
+            {person.lastSeenAt ? `last seen ${localTime(person.lastSeenAt, timeZone)}` : "not seen yet"}
           </p>
         </div>
         {mayEdit ? (
