@@ -51,6 +51,8 @@ test("a forgotten password: a link by mail, a new password, and every old sessio
   const owner = await signUpShop(somebody);
   await page.goto("/sign-in");
   await page.getByRole("link", { name: "Forgot the password?" }).click();
+  // Both pages have a field for the e-mail: it is the next one that is meant.
+  await expect(page.getByRole("heading", { level: 1 })).toHaveText("Forgot the password");
   await page.getByLabel("E-mail").fill(owner.email);
   await page.getByRole("button", { name: "Send the link" }).click();
   await expect(
