@@ -2,6 +2,7 @@
 // Plain JavaScript on node: modules alone, until the packages are there.
 import { spawn } from "node:child_process";
 import { existsSync, mkdirSync, readFileSync, rmSync } from "node:fs";
+import { resolve } from "node:path";
 import { prepare } from "../fakes/prepare.mjs";
 import { buildIfNeeded } from "../fakes/build.mjs";
 
@@ -62,7 +63,8 @@ await stage("unit", () =>
 await stage("build", () => buildIfNeeded());
 await stage("journeys", () =>
   run(bin("playwright"), ["test", "--config", "tests/playwright.config.ts"], {
-    PLAYWRIGHT_JSON_OUTPUT_NAME: `${RESULTS}/journeys.json`,
+    // The runner takes a relative name from the folder of its configuration.
+    PLAYWRIGHT_JSON_OUTPUT_NAME: resolve(RESULTS, "journeys.json"),
   }),
 );
 
@@ -76,12 +78,12 @@ const journeys = existsSync(`${RESULTS}/journeys.json`)
       failed: report.stats.unexpected + report.stats.flaky + report.errors.length,
     }))
   : { passed: 0, failed: 1 };
-const static_ = stages.filter(({ name }) => name === "types" || name === "lint");
+const checks = stages.filter(({ name }) => name === "types" || name === "lint");
 
 console.log("\nTime by stage");
 for (const { name, seconds, ok } of stages)
   console.log(`  ${name.padEnd(10)} ${seconds.toFixed(0).padStart(5)} s  ${ok ? "ok" : "FAILED"}`);
-const passed = unit.passed + journeys.passed + static_.filter(({ ok }) => ok).length;
-const failed = unit.failed + journeys.failed + static_.filter(({ ok }) => !ok).length;
+const passed = unit.passed + journeys.passed + checks.filter(({ ok }) => ok).length;
+const failed = unit.failed + journeys.failed + checks.filter(({ ok }) => !ok).length;
 console.log(`\n${passed} passed, ${failed} failed`);
 process.exit(failed === 0 && stages.every(({ ok }) => ok) ? 0 : 1);
