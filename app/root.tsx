@@ -2,6 +2,7 @@ import { Links, Meta, Outlet, Scripts, ScrollRestoration } from "react-router";
 import { database } from "~/db.server";
 import { env } from "~/env.server";
 import { requireSameOrigin } from "~/auth/same-origin.server";
+import { requireForm } from "~/forms/require-form.server";
 import { anonymousContext } from "~/context";
 import { ErrorPage } from "~/components/frame/error-page";
 import { explainError } from "~/components/frame/explain-error";
@@ -9,8 +10,9 @@ import type { Route } from "./+types/root";
 import "./app.css";
 
 export const middleware: Route.MiddlewareFunction[] = [
-  ({ request, context }) => {
+  ({ request, context, url }) => {
     requireSameOrigin(request, env().PUBLIC_ORIGIN);
+    requireForm(request, url.pathname);
     context.set(anonymousContext, { db: database().db });
   },
 ];

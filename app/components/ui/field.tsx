@@ -1,4 +1,4 @@
-import { useId } from "react";
+import { useEffect, useId, useRef } from "react";
 import type { FormRefusal } from "~/forms/parse-form";
 
 /** What a page hands its fields: the refusal of the last try, if there was one. */
@@ -135,7 +135,7 @@ export function Checkbox({
         <input
           type="checkbox"
           value="yes"
-          className="size-5 accent-enamel"
+          className="size-5 shrink-0 accent-enamel"
           defaultChecked={checked}
           {...rest}
           {...control}
@@ -156,13 +156,28 @@ export function Checkbox({
   );
 }
 
-/** What is wrong with the form as a whole, announced when it comes back. */
+/** What is wrong with the form as a whole, announced when it comes back; the first field to mend takes the focus. */
 export function FormProblem({ refusal }: { refusal: Refusal }) {
+  const problem = useRef<HTMLParagraphElement>(null);
+  // On a phone the button stands a screen below the first field: without this, a refusal changes nothing in sight.
+  useEffect(() => {
+    if (!refusal || !problem.current) return;
+    const field = problem.current.closest("form")?.querySelector<HTMLElement>("[aria-invalid=true]");
+    for (let at = field?.closest("details"); at; at = at.parentElement?.closest("details")) at.open = true;
+    const target = field ?? problem.current;
+    target.focus({ preventScroll: true });
+    target.scrollIntoView({ block: "center" });
+  }, [refusal]);
   if (!refusal) return null;
   const whole = refusal.errors[""];
   const count = Object.keys(refusal.errors).filter((name) => name !== "").length;
   return (
-    <p role="alert" className="rounded border-2 border-error bg-sheet px-4 py-3 font-semibold text-error">
+    <p
+      ref={problem}
+      role="alert"
+      tabIndex={-1}
+      className="rounded border-2 border-error bg-sheet px-4 py-3 font-semibold text-error outline-none"
+    >
       {whole ?? (count === 1 ? "One field needs another look." : `${count} fields need another look.`)}
     </p>
   );

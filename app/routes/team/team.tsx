@@ -218,10 +218,11 @@ export default function Team({ loaderData, actionData }: Route.ComponentProps) {
                   key={row.id}
                   className="flex flex-wrap items-center justify-between gap-3 border-b border-line px-5 py-4 last:border-b-0"
                 >
-                  <div>
+                  <div className="min-w-0">
                     <p className="font-semibold">{row.name}</p>
-                    <p className="text-sm break-all text-ink-soft">
-                      {row.email}, {row.role}, sent {localTime(row.sentAt, viewer.timeZone)}
+                    <p className="text-sm break-all text-ink-soft">{row.email}</p>
+                    <p className="text-sm text-ink-soft">
+                      {row.role}, sent {localTime(row.sentAt, viewer.timeZone)}
                       {row.expiresAt < now ? ", expired" : ""}
                     </p>
                   </div>
