@@ -1,7 +1,9 @@
 import { sendMail } from "~/mail/send-mail.server";
 import type { TaskHandlers } from "~/queue/run-tasks.server";
 import { checkRecording } from "~/recordings/check-recording.server";
-import { convertRecording, prepareRecording } from "~/recordings/prepare-recording.server";
+import { convertRecording } from "~/recordings/convert-recording.server";
+import { deleteRecordingFiles } from "~/recordings/delete-recording.server";
+import { prepareRecording } from "~/recordings/prepare-recording.server";
 import { abandonUpload } from "~/recordings/upload.server";
 
 /** What each kind of background task does: the one place that joins the queue with the rooms. */
@@ -11,4 +13,5 @@ export const taskHandlers: TaskHandlers = {
   "prepare-recording": prepareRecording,
   "convert-recording": convertRecording,
   "abandon-upload": abandonUpload,
+  "delete-recording": deleteRecordingFiles,
 };

@@ -3,7 +3,12 @@ import type { ShopId } from "#drizzle/schema/ids";
 import { tasks } from "#drizzle/schema/index";
 
 export type TaskKind =
-  "send-mail" | "check-recording" | "prepare-recording" | "convert-recording" | "abandon-upload";
+  | "send-mail"
+  | "check-recording"
+  | "prepare-recording"
+  | "convert-recording"
+  | "abandon-upload"
+  | "delete-recording";
 
 /** Asks for background work. Call it in the transaction that causes the work; the same dedupe key is one row. */
 export function addTask(

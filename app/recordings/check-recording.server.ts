@@ -1,16 +1,15 @@
-import { DeleteObjectCommand, HeadObjectCommand } from "@aws-sdk/client-s3";
-import { and, eq } from "drizzle-orm";
+import { and, eq, isNull } from "drizzle-orm";
 import { z } from "zod";
 import type { ShopScope } from "~/auth/scope.server";
 import { inTransaction } from "~/db.server";
-import { env } from "~/env.server";
 import { addTask } from "~/queue/add-task.server";
 import type { RecordingId } from "#drizzle/schema/ids";
 import { recordings } from "#drizzle/schema/index";
+import { addFileDeletion } from "./delete-recording.server";
 import { CONVERT_STEPS, judgeVideo } from "./judge-video";
 import { converterIsThere } from "./ffmpeg.server";
-import { objectStorage } from "./object-storage.server";
 import { probeVideo } from "./probe-video.server";
+import { storedSize } from "./stored-files.server";
 
 const Payload = z.object({ recordingId: z.string().transform((id) => id as RecordingId) });
 
@@ -24,23 +23,24 @@ function change(scope: ShopScope, recordingId: RecordingId, values: Change): voi
     .run();
 }
 
-/** Looks into an uploaded file itself: what it is decides, not what the browser said. Refused files do not stay in storage. */
+/** Looks into an uploaded file itself: what it is decides, not what the browser said. Refused files leave storage. */
 export async function checkRecording(scope: ShopScope, payload: unknown, now: number): Promise<void> {
   const { recordingId } = Payload.parse(payload);
   const recording = scope.db
     .select()
     .from(recordings)
-    .where(and(eq(recordings.shopId, scope.shopId), eq(recordings.id, recordingId)))
+    .where(
+      and(eq(recordings.shopId, scope.shopId), eq(recordings.id, recordingId), isNull(recordings.deletedAt)),
+    )
     .get();
   if (!recording || recording.state !== "checking") return;
-  const Bucket = env().S3_BUCKET;
-  const refuse = async (stateReason: string) => {
-    await objectStorage().send(new DeleteObjectCommand({ Bucket, Key: recording.objectKey }));
-    change(scope, recordingId, { state: "refused", stateReason });
-  };
-  const { ContentLength: sizeBytes = 0 } = await objectStorage().send(
-    new HeadObjectCommand({ Bucket, Key: recording.objectKey }),
-  );
+  const refuse = (stateReason: string) =>
+    inTransaction(scope, (scope) => {
+      change(scope, recordingId, { state: "refused", stateReason });
+      addFileDeletion(scope, recordingId, now);
+    });
+  const sizeBytes = await storedSize(recording.objectKey);
+  if (sizeBytes === null) return refuse("This file is not in storage any more. Upload it again.");
   if (sizeBytes === 0) return refuse("This file is empty. Copy it from the camera again.");
   const probe = await probeVideo(recording.objectKey, sizeBytes);
   if (!probe)

@@ -1,27 +1,57 @@
-import { spawn } from "node:child_process";
+import { spawn, type ChildProcess } from "node:child_process";
 import { mkdtemp, rm } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 
-/** Runs ffmpeg with a list of arguments, never through a shell; gives what it wrote to standard output. */
-export function runFfmpeg(args: readonly string[], timeoutMs: number): Promise<Buffer> {
+/** The converter ran and could not do it, or took too long. */
+export class ConverterStopped extends Error {}
+
+// A converter that outlives this process would go on for hours while the next one starts the same work again.
+const running = new Set<ChildProcess>();
+process.on("exit", () => {
+  for (const child of running) child.kill("SIGKILL");
+});
+
+/**
+ * Runs ffmpeg with a list of arguments, never through a shell. What it writes to standard output goes to `onOutput`
+ * piece by piece. Throws ConverterStopped with a sentence, or the fault of starting it.
+ */
+export function runFfmpeg(
+  args: readonly string[],
+  timeoutMs: number,
+  onOutput: (piece: Buffer) => void = () => {},
+): Promise<void> {
   return new Promise((resolve, reject) => {
     const child = spawn("ffmpeg", ["-nostdin", "-hide_banner", "-loglevel", "error", ...args], {
       stdio: ["ignore", "pipe", "pipe"],
-      timeout: timeoutMs,
     });
-    const [out, problems]: [Buffer[], Buffer[]] = [[], []];
-    child.stdout.on("data", (chunk: Buffer) => out.push(chunk));
-    child.stderr.on("data", (chunk: Buffer) => problems.push(chunk));
-    child.on("error", reject);
-    child.on("close", (code, signal) => {
-      if (code === 0) return resolve(Buffer.concat(out));
-      const said = Buffer.concat(problems).toString("utf8").trim().split("\n").at(-1) ?? "";
+    running.add(child);
+    let late = false;
+    const clock = setTimeout(() => {
+      late = true;
+      child.kill("SIGKILL");
+    }, timeoutMs);
+    let said = "";
+    child.stdout.on("data", onOutput);
+    child.stderr.on("data", (piece: Buffer) => {
+      said = (said + piece.toString("utf8")).slice(-4000);
+    });
+    const end = () => {
+      clearTimeout(clock);
+      running.delete(child);
+    };
+    child.on("error", (error) => {
+      end();
+      reject(error);
+    });
+    child.on("close", (code) => {
+      end();
+      if (code === 0) return resolve();
+      // Links to storage are secrets while they live.
+      const last = (said.trim().split("\n").at(-1) ?? "").replace(/https?:\S+/g, "the recording");
       reject(
-        new Error(
-          signal
-            ? `The converter took too long.`
-            : `The converter stopped: ${said.replace(/https?:\S+/g, "the recording")}`,
+        new ConverterStopped(
+          late ? "The converter took too long." : `The converter stopped: ${last || code}`,
         ),
       );
     });

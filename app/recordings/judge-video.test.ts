@@ -23,6 +23,14 @@ test("HEVC and mixtures are converted", () => {
   expect(judgeVideo({ ...phone, videoCodec: "hevc" })).toMatchObject({ plays: false, convert: true });
   expect(judgeVideo({ ...phone, container: "mkv" })).toMatchObject({ convert: true });
   expect(judgeVideo({ ...phone, container: "webm" })).toMatchObject({ convert: true });
+  expect(judgeVideo({ ...phone, videoCodec: "avc-professional" })).toMatchObject({
+    convert: true,
+    sentence: expect.stringContaining("professional profile") as string,
+  });
+  expect(judgeVideo({ ...phone, container: "mov", audioCodec: "pcm-s16" })).toMatchObject({
+    convert: true,
+    sentence: "The sound of this recording is PCM-S16 in MOV, which browsers do not all play.",
+  });
 });
 
 test("no picture, no length and too long are refused", () => {

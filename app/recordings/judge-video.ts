@@ -18,6 +18,13 @@ export type Verdict =
 const AUDIO_IN_MP4 = new Set([null, "aac", "mp3"]);
 const AUDIO_IN_WEBM = new Set([null, "opus", "vorbis"]);
 
+const CODEC_NAMES: Readonly<Record<string, string>> = {
+  hevc: "HEVC (high efficiency)",
+  avc: "H.264",
+  "avc-professional": "H.264 in a professional profile (10 bit or 4:2:2)",
+  unknown: "in a coding unknown here,",
+};
+
 /** Whether browsers play a recording as it is: H.264 with AAC in MP4 or MOV, VP8, VP9 or AV1 with Opus in WebM. */
 export function judgeVideo(probe: Probe): Verdict {
   if (probe.videoCodec === null && probe.audioCodec === null)
@@ -46,18 +53,18 @@ export function judgeVideo(probe: Probe): Verdict {
       sentence: "This recording is longer than four hours. Cut it into jobs and upload them one by one.",
     };
   const inMp4 = probe.container === "mp4" || probe.container === "mov";
-  if (inMp4 && probe.videoCodec === "avc" && AUDIO_IN_MP4.has(probe.audioCodec)) return { plays: true };
-  if (
-    probe.container === "webm" &&
-    ["vp8", "vp9", "av1"].includes(probe.videoCodec) &&
-    AUDIO_IN_WEBM.has(probe.audioCodec)
-  )
-    return { plays: true };
-  const name = probe.videoCodec === "hevc" ? "HEVC (high efficiency)" : probe.videoCodec.toUpperCase();
+  const picturePlays = inMp4
+    ? probe.videoCodec === "avc"
+    : probe.container === "webm" && ["vp8", "vp9", "av1"].includes(probe.videoCodec);
+  const soundPlays = (inMp4 ? AUDIO_IN_MP4 : AUDIO_IN_WEBM).has(probe.audioCodec);
+  if (picturePlays && soundPlays) return { plays: true };
+  const container = probe.container.toUpperCase();
   return {
     plays: false,
     convert: true,
-    sentence: `This recording is ${name} in ${probe.container.toUpperCase()}, which browsers do not all play.`,
+    sentence: picturePlays
+      ? `The sound of this recording is ${(probe.audioCodec ?? "").toUpperCase()} in ${container}, which browsers do not all play.`
+      : `This recording is ${CODEC_NAMES[probe.videoCodec] ?? probe.videoCodec.toUpperCase()} in ${container}, which browsers do not all play.`,
   };
 }
 

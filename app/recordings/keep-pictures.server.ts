@@ -40,7 +40,8 @@ export async function keepPictures(
     isNull(recordings.deletedAt),
   );
   const row = scope.db.select().from(recordings).where(mine).get();
-  if (!row) return { ok: false, status: 404, sentence: "That recording is not yours, or it is gone." };
+  if (!row || row.state === "refused")
+    return { ok: false, status: 404, sentence: "That recording is not yours, or it is gone." };
   if (!isJpeg(made.poster) || !isJpeg(made.storyboard) || (made.peaks !== null && !peaksFit(made.peaks)))
     return { ok: false, status: 422, sentence: "These are no pictures of a recording." };
   if (row.posterKey !== null) return { ok: true };

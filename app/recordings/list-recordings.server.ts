@@ -1,12 +1,13 @@
-import { DeleteObjectCommand } from "@aws-sdk/client-s3";
 import { and, desc, eq, isNull, sql } from "drizzle-orm";
 import type { Scope } from "~/auth/scope.server";
-import { writeAudit } from "~/auth/write-audit.server";
-import { inTransaction } from "~/db.server";
-import { env } from "~/env.server";
 import type { RecordingId } from "#drizzle/schema/ids";
-import { clips, lessons, recordings, users } from "#drizzle/schema/index";
-import { objectStorage } from "./object-storage.server";
+import { recordings, users } from "#drizzle/schema/index";
+
+/** The state of the background work on a recording: `open` while it is waited for, `stopped` when it was given up. */
+const work = (of: "open" | "stopped") => sql<number>`exists (
+  select 1 from tasks t
+  where t.dedupe_key in ('check-recording:' || recordings.id, 'prepare-recording:' || recordings.id, 'convert-recording:' || recordings.id)
+    and t.done_at is null and t.failed_at is ${of === "open" ? sql`null` : sql`not null`})`;
 
 /** Every recording of the shop, newest first. */
 export function listRecordings(scope: Scope) {
@@ -23,6 +24,9 @@ export function listRecordings(scope: Scope) {
       height: recordings.height,
       hasPoster: sql<number>`${recordings.posterKey} is not null`,
       uploadedBy: users.name,
+      mine: sql<number>`${recordings.uploadedBy} = ${scope.userId}`,
+      working: work("open"),
+      stopped: work("stopped"),
       createdAt: recordings.createdAt,
       lessonTitle: sql<
         string | null
@@ -31,6 +35,28 @@ export function listRecordings(scope: Scope) {
     .from(recordings)
     .innerJoin(users, eq(users.id, recordings.uploadedBy))
     .where(and(eq(recordings.shopId, scope.shopId), isNull(recordings.deletedAt)))
+    .orderBy(desc(recordings.createdAt))
+    .all();
+}
+
+/** What this person began to upload and did not finish, newest first. */
+export function unfinishedUploads(scope: Scope) {
+  return scope.db
+    .select({
+      id: recordings.id,
+      fileName: recordings.fileName,
+      sizeBytes: recordings.sizeBytes,
+      createdAt: recordings.createdAt,
+    })
+    .from(recordings)
+    .where(
+      and(
+        eq(recordings.shopId, scope.shopId),
+        eq(recordings.uploadedBy, scope.userId),
+        eq(recordings.state, "uploading"),
+        isNull(recordings.deletedAt),
+      ),
+    )
     .orderBy(desc(recordings.createdAt))
     .all();
 }
@@ -50,53 +76,4 @@ export function renameRecording(scope: Scope, recordingId: RecordingId, title: s
       )
       .run().changes === 1
   );
-}
-
-export type Deleted =
-  { ok: true } | { ok: false; reason: "missing" } | { ok: false; reason: "used"; sentence: string };
-
-/** Deletes a recording and its files. Refused while a lesson or a published revision plays it. */
-export async function deleteRecording(scope: Scope, recordingId: RecordingId, now: number): Promise<Deleted> {
-  const keys = inTransaction(scope, (scope): string[] | Deleted => {
-    const row = scope.db
-      .select()
-      .from(recordings)
-      .where(
-        and(
-          eq(recordings.shopId, scope.shopId),
-          eq(recordings.id, recordingId),
-          isNull(recordings.deletedAt),
-        ),
-      )
-      .get();
-    if (!row) return { ok: false, reason: "missing" };
-    const inDraft = scope.db
-      .select({ title: lessons.title })
-      .from(clips)
-      .innerJoin(lessons, eq(lessons.id, clips.lessonId))
-      .where(and(eq(clips.shopId, scope.shopId), eq(clips.recordingId, recordingId)))
-      .get();
-    const [published] = scope.db.all<{ title: string }>(sql`
-      select l.title as title from revisions r join lessons l on l.id = r.lesson_id
-      join json_each(r.snapshot, '$.clips') clip on json_extract(clip.value, '$.recordingId') = ${recordingId}
-      where r.shop_id = ${scope.shopId} limit 1`);
-    const user = inDraft ?? published;
-    if (user)
-      return {
-        ok: false,
-        reason: "used",
-        sentence: `The lesson “${user.title}” plays this recording, so it stays.`,
-      };
-    scope.db.update(recordings).set({ deletedAt: now }).where(eq(recordings.id, recordingId)).run();
-    writeAudit(
-      scope,
-      { action: "deleted", noun: "recording", nounId: recordingId, detail: row.fileName },
-      now,
-    );
-    return [row.objectKey, row.playKey, row.posterKey, row.storyboardKey].filter((key) => key !== null);
-  });
-  if (!Array.isArray(keys)) return keys;
-  for (const Key of new Set(keys))
-    await objectStorage().send(new DeleteObjectCommand({ Bucket: env().S3_BUCKET, Key }));
-  return { ok: true };
 }

@@ -1,15 +1,9 @@
 import { GetObjectCommand } from "@aws-sdk/client-s3";
-import { CustomSource, Input, MATROSKA, MP4, QTFF, WEBM } from "mediabunny";
+import { CustomSource, EncodedPacketSink, Input, MATROSKA, MP4, QTFF, WEBM } from "mediabunny";
 import { env } from "~/env.server";
 import type { Probe } from "./judge-video";
 import { objectStorage } from "./object-storage.server";
-
-const CONTAINERS: Readonly<Record<string, Probe["container"]>> = {
-  MP4: "mp4",
-  QuickTime: "mov",
-  WebM: "webm",
-  Matroska: "mkv",
-};
+import { readProbe } from "./read-probe";
 
 async function readBytes(key: string, start: number, end: number): Promise<Uint8Array> {
   const part = await objectStorage().send(
@@ -39,21 +33,9 @@ export async function probeVideo(key: string, sizeBytes: number): Promise<Probe 
   });
   const input = new Input({ source, formats: [MP4, QTFF, WEBM, MATROSKA] });
   try {
-    if (!(await input.canRead())) return null;
-    const [video, audio] = [await input.getPrimaryVideoTrack(), await input.getPrimaryAudioTrack()];
-    const container = CONTAINERS[(await input.getFormat()).name] ?? "other";
-    const duration = (await input.getDurationFromMetadata()) ?? (await input.computeDuration());
-    // A file that was cut off still has its table of contents in front; its last second is then missing.
-    if (video) await lastSecondIsThere(input, duration);
-    return {
-      container,
-      videoCodec: video ? ((await video.getCodec()) ?? "unknown") : null,
-      audioCodec: audio ? ((await audio.getCodec()) ?? "unknown") : null,
-      width: video ? await video.getDisplayWidth() : 0,
-      height: video ? await video.getDisplayHeight() : 0,
-      rotation: video ? await video.getRotation() : 0,
-      durationMs: Math.round(duration * 1000),
-    };
+    const probe = await readProbe(input);
+    if (probe?.videoCodec && !(await endIsThere(input, probe.durationMs / 1000))) return null;
+    return probe;
   } catch {
     if (storageFault) throw storageFault;
     return null;
@@ -62,10 +44,10 @@ export async function probeVideo(key: string, sizeBytes: number): Promise<Probe 
   }
 }
 
-async function lastSecondIsThere(input: Input, duration: number): Promise<void> {
-  const { EncodedPacketSink } = await import("mediabunny");
+/** A file that was cut off may still have its table of contents in front; its last pictures are then missing. */
+async function endIsThere(input: Input, duration: number): Promise<boolean> {
   const video = await input.getPrimaryVideoTrack();
-  if (!video) return;
+  if (!video) return false;
   const packet = await new EncodedPacketSink(video).getPacket(Math.max(0, duration - 0.5));
-  if (!packet || packet.byteLength === 0) throw new Error("the end of the file is missing");
+  return packet !== null && packet.byteLength > 0;
 }

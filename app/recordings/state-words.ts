@@ -10,6 +10,3 @@ export const STATE_WORDS: Readonly<Record<(typeof recordings.$inferSelect)["stat
   converting: "Being converted",
   refused: "Refused",
 };
-
-/** States that change by themselves, so the page looks again. */
-export const IN_WORK: readonly string[] = ["checking", "preparing", "converting"];

@@ -2,7 +2,12 @@ import { execFileSync } from "node:child_process";
 import { mkdtempSync, readFileSync, rmSync, truncateSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { GetObjectCommand, HeadObjectCommand } from "@aws-sdk/client-s3";
+import {
+  CompleteMultipartUploadCommand,
+  GetObjectCommand,
+  HeadObjectCommand,
+  PutObjectCommand,
+} from "@aws-sdk/client-s3";
 import { eq } from "drizzle-orm";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import type { Scope, ShopScope } from "~/auth/scope.server";
@@ -11,23 +16,20 @@ import { taskHandlers } from "~/background.server";
 import { env } from "~/env.server";
 import { recordings, tasks } from "#drizzle/schema/index";
 import { startFakeS3, type FakeS3 } from "../../fakes/s3/start-fake-s3";
-import { aDatabase, aLesson, aScope, aShop, NOON } from "../../tests/support/factories";
+import { aDatabase, aLesson, aRecording, aScope, aShop, NOON } from "../../tests/support/factories";
 import { setTestEnvironment } from "../../tests/support/environment";
 import { aPublishedLesson } from "../../tests/support/published-lesson";
 import { checkRecording } from "./check-recording.server";
-import { deleteRecording, listRecordings } from "./list-recordings.server";
+import { convertRecording } from "./convert-recording.server";
+import { deleteRecording } from "./delete-recording.server";
+import { listRecordings, unfinishedUploads } from "./list-recordings.server";
 import { keepPictures } from "./keep-pictures.server";
 import { objectStorage } from "./object-storage.server";
 import { pictureLink, playbackLink } from "./playback-link.server";
+import { madeKey } from "./object-key";
 import { readPeaks, soundPeaks } from "./sound-peaks";
-import {
-  abandonUpload,
-  beginUpload,
-  cancelUpload,
-  completeUpload,
-  signParts,
-  uploadState,
-} from "./upload.server";
+import { abortStoredUpload, storedParts, storedSize } from "./stored-files.server";
+import { beginUpload, cancelUpload, completeUpload, signParts, uploadState } from "./upload.server";
 
 const folder = mkdtempSync(join(tmpdir(), "upload-"));
 let fake: FakeS3;
@@ -176,11 +178,11 @@ test("only parts that the file has are signed, and nothing of another shop is to
   for (const result of [
     await signParts(stranger, plan.recordingId, [1]),
     await completeUpload(stranger, plan.recordingId, NOON),
-    await cancelUpload(stranger, plan.recordingId, NOON),
+    cancelUpload(stranger, plan.recordingId, NOON),
     await uploadState(stranger, plan.recordingId),
   ])
     expect(result).toMatchObject({ ok: false, status: 404 });
-  expect(await deleteRecording(stranger, plan.recordingId, NOON)).toEqual({ ok: false, reason: "missing" });
+  expect(deleteRecording(stranger, plan.recordingId, NOON)).toEqual({ ok: false, reason: "missing" });
   expect(await playbackLink(stranger, plan.recordingId, NOON)).toBeNull();
   expect(listRecordings(stranger)).toEqual([]);
 });
@@ -295,7 +297,7 @@ test("a recording is kept while a lesson plays it, and gone for good when it is 
   await completeUpload(marta, id, NOON);
   await work(marta);
   aLesson(marta, { title: "Belt" }, id);
-  expect(await deleteRecording(marta, id, NOON)).toMatchObject({
+  expect(deleteRecording(marta, id, NOON)).toMatchObject({
     ok: false,
     reason: "used",
     sentence: expect.stringContaining("“Belt”"),
@@ -304,30 +306,193 @@ test("a recording is kept while a lesson plays it, and gone for good when it is 
   await completeUpload(marta, free, NOON);
   await work(marta);
   const key = find(marta, free)?.objectKey ?? "";
-  expect(await deleteRecording(marta, free, NOON)).toEqual({ ok: true });
+  expect(deleteRecording(marta, free, NOON)).toEqual({ ok: true });
+  await work(marta);
+  for (const what of ["poster", "storyboard"] as const)
+    expect(await storedSize(madeKey(marta.shopId, free, what))).toBeNull();
   await expect(
     objectStorage().send(new HeadObjectCommand({ Bucket: env().S3_BUCKET, Key: key })),
   ).rejects.toThrow();
   expect(await playbackLink(marta, free, NOON)).toBeNull();
 }, 60_000);
 
-test("a cancelled upload and one that nobody finished for a week leave nothing in storage", async () => {
-  const { marta, db } = aBench();
-  for (const give of ["cancel", "abandon"] as const) {
-    const plan = await beginUpload(marta, { fileName: `${give}.mp4`, sizeBytes: 100, lastModified: 1 }, NOON);
+test("an upload that is cancelled, deleted or not finished for a week leaves nothing in storage", async () => {
+  for (const give of ["cancel", "delete", "abandon"] as const) {
+    const { marta, db } = aBench();
+    const order = { fileName: `${give}.mp4`, sizeBytes: 100, lastModified: 1 };
+    const plan = await beginUpload(marta, order, NOON);
     if (!plan.ok) throw new Error(plan.sentence);
-    if (give === "cancel") await cancelUpload(marta, plan.recordingId, NOON);
-    else
-      await abandonUpload({ db, shopId: marta.shopId, by: "test" }, { recordingId: plan.recordingId }, NOON);
-    expect(find(marta, plan.recordingId)?.deletedAt).toBe(NOON);
-    const again = await beginUpload(
-      marta,
-      { fileName: `${give}.mp4`, sizeBytes: 100, lastModified: 1 },
-      NOON,
-    );
-    expect(again.ok && again.recordingId).not.toBe(plan.recordingId);
+    const { recordingId } = plan;
+    const signed = await signParts(marta, recordingId, [1]);
+    if (!signed.ok) throw new Error(signed.sentence);
+    await fetch(signed.urls[1] ?? "", { method: "PUT", body: new Uint8Array(100) });
+    const row = find(marta, recordingId);
+    if (!row) throw new Error("no row");
+    expect(await storedParts(row)).toHaveLength(1);
+    expect(unfinishedUploads(marta).map(({ id }) => id)).toEqual([recordingId]);
+    if (give === "cancel") expect(cancelUpload(marta, recordingId, NOON)).toEqual({ ok: true });
+    else if (give === "delete") expect(deleteRecording(marta, recordingId, NOON)).toEqual({ ok: true });
+    else {
+      const week = NOON + 7 * 86_400_000;
+      expect(await runNextTask(db, taskHandlers, () => week - 1)).toBe(false);
+      expect(await runNextTask(db, taskHandlers, () => week)).toBe(true);
+    }
+    expect(find(marta, recordingId)?.deletedAt).not.toBeNull();
+    while (await runNextTask(db, taskHandlers, () => NOON + 7 * 86_400_000));
+    expect({ give, parts: await storedParts(row) }).toEqual({ give, parts: null });
+    expect(unfinishedUploads(marta)).toEqual([]);
+    const again = await beginUpload(marta, order, NOON);
+    expect(again.ok && again.recordingId).not.toBe(recordingId);
   }
 });
+
+test("a server that stopped right after storage had completed the upload goes on without sending anything again", async () => {
+  const { marta } = aBench();
+  const id = await send(marta, good, "lost.mp4");
+  const row = find(marta, id);
+  if (!row) throw new Error("no row");
+  const parts = (await storedParts(row)) ?? [];
+  await objectStorage().send(
+    new CompleteMultipartUploadCommand({
+      Bucket: env().S3_BUCKET,
+      Key: row.objectKey,
+      UploadId: row.uploadId ?? "",
+      MultipartUpload: { Parts: parts.map(({ n, etag }) => ({ PartNumber: n, ETag: etag })) },
+    }),
+  );
+  const order = { fileName: "lost.mp4", sizeBytes: row.sizeBytes, lastModified: 1 };
+  expect(await beginUpload(marta, order, NOON)).toMatchObject({ ok: true, recordingId: id, done: [1] });
+  expect(await completeUpload(marta, id, NOON)).toEqual({ ok: true });
+  expect(find(marta, id)?.state).toBe("checking");
+});
+
+test("an upload that storage has thrown away begins anew and leaves no second row", async () => {
+  const { marta } = aBench();
+  const order = { fileName: "old.mp4", sizeBytes: 100, lastModified: 1 };
+  const first = await beginUpload(marta, order, NOON);
+  if (!first.ok) throw new Error(first.sentence);
+  const row = find(marta, first.recordingId);
+  if (!row) throw new Error("no row");
+  await abortStoredUpload(row);
+  expect(await completeUpload(marta, first.recordingId, NOON)).toMatchObject({ ok: false, status: 404 });
+  const second = await beginUpload(marta, order, NOON + 1);
+  expect(second).toMatchObject({ ok: true, done: [] });
+  expect(unfinishedUploads(marta).map(({ id }) => id)).toEqual([second.ok && second.recordingId]);
+});
+
+test("closing an upload twice at one time is one recording", async () => {
+  const { marta, db } = aBench();
+  const id = await send(marta, good);
+  const both = await Promise.all([completeUpload(marta, id, NOON), completeUpload(marta, id, NOON)]);
+  expect(both).toEqual([{ ok: true }, { ok: true }]);
+  expect(db.select().from(tasks).where(eq(tasks.kind, "check-recording")).all()).toHaveLength(1);
+});
+
+test("a file that arrived with another size than declared is not taken", async () => {
+  const { marta } = aBench();
+  const id = await send(marta, good, "other.mp4");
+  const row = find(marta, id);
+  if (!row) throw new Error("no row");
+  await abortStoredUpload(row);
+  const put = { Bucket: env().S3_BUCKET, Key: row.objectKey, Body: new Uint8Array(row.sizeBytes - 1) };
+  await objectStorage().send(new PutObjectCommand(put));
+  expect(await completeUpload(marta, id, NOON)).toMatchObject({ ok: false, status: 409 });
+  expect(find(marta, id)?.state).toBe("uploading");
+});
+
+test("an upright HEVC film becomes 720 wide and stays upright; its place names are gone", async () => {
+  const { marta } = aBench();
+  const x265 = [
+    "-c:v",
+    "libx265",
+    "-preset",
+    "ultrafast",
+    "-x265-params",
+    "log-level=error",
+    "-tag:v",
+    "hvc1",
+  ];
+  const upright = film(
+    "upright.mov",
+    ...["-vf", "scale=1080:1922", "-t", "1", ...x265, "-c:a", "aac", "-metadata", "location=+51.5-0.1/"],
+  );
+  const id = await send(marta, upright, "upright.mov");
+  await completeUpload(marta, id, NOON);
+  await work(marta);
+  const row = find(marta, id);
+  expect(row).toMatchObject({ state: "ready", playKey: madeKey(marta.shopId, id, "converted") });
+  const copy = join(folder, "upright-copy.mp4");
+  const link = await playbackLink(marta, id, NOON);
+  writeFileSync(copy, new Uint8Array(await (await fetch(link?.url ?? "")).arrayBuffer()));
+  const shown = ["-show_entries", "stream=width,height,pix_fmt:format_tags=location", "-of", "csv=p=0"];
+  const probed = execFileSync("ffprobe", ["-v", "error", "-select_streams", "v", ...shown, copy]);
+  expect(probed.toString().trim()).toBe("720,1282,yuv420p");
+  expect(row?.posterKey).not.toBeNull();
+}, 60_000);
+
+test("a professional profile of H.264 is converted, as browsers do not play it", async () => {
+  const { marta } = aBench();
+  const camera = film("camera.mp4", "-t", "1", "-c:v", "libx264", "-pix_fmt", "yuv422p10le", "-c:a", "aac");
+  const id = await send(marta, camera, "camera.mp4");
+  await completeUpload(marta, id, NOON);
+  await runNextTask(marta.db, taskHandlers, () => NOON, "light");
+  expect(find(marta, id)).toMatchObject({ state: "converting", videoCodec: "avc-professional" });
+  expect(listRecordings(marta)[0]).toMatchObject({ working: 1, stopped: 0 });
+  await work(marta);
+  expect(find(marta, id)?.state).toBe("ready");
+  expect(listRecordings(marta)[0]).toMatchObject({ working: 0, stopped: 0 });
+}, 60_000);
+
+/** A recording that waits for its conversion, with these bytes in storage. */
+async function aConverting(scope: Scope, body: Uint8Array) {
+  const id = aRecording(scope, {
+    state: "converting",
+    container: "mov",
+    videoCodec: "hevc",
+    sizeBytes: body.length,
+    playKey: null,
+  });
+  const Key = find(scope, id)?.objectKey ?? "";
+  await objectStorage().send(new PutObjectCommand({ Bucket: env().S3_BUCKET, Key, Body: body }));
+  return id;
+}
+
+const shopOf = ({ db, shopId }: Scope): ShopScope => ({ db, shopId, by: "test" });
+
+test("a film that the converter cannot read needs converting by hand; storage that is not there is tried again", async () => {
+  const { marta } = aBench();
+  const broken = await aConverting(marta, new Uint8Array(5000));
+  await convertRecording(shopOf(marta), { recordingId: broken }, NOON);
+  expect(find(marta, broken)).toMatchObject({ state: "needs-converting", playKey: null });
+  expect(find(marta, broken)?.stateReason).toMatch(
+    /^This recording could not be converted here\. The converter stopped: .+\. Export it/,
+  );
+  expect(find(marta, broken)?.stateReason).not.toContain("http");
+  const lost = aRecording(marta, { state: "converting", container: "mov", playKey: null });
+  await expect(convertRecording(shopOf(marta), { recordingId: lost }, NOON)).rejects.toThrow();
+  expect(find(marta, lost)?.state).toBe("converting");
+}, 60_000);
+
+test("a recording that is deleted while it is converted leaves no copy behind", async () => {
+  const { marta } = aBench();
+  const id = await aConverting(marta, readFileSync(good));
+  const converting = convertRecording(shopOf(marta), { recordingId: id }, NOON);
+  expect(deleteRecording(marta, id, NOON)).toEqual({ ok: true });
+  await work(marta);
+  await converting;
+  expect(await storedSize(madeKey(marta.shopId, id, "converted"))).toBeNull();
+  expect(find(marta, id)).toMatchObject({ playKey: null, state: "converting" });
+}, 60_000);
+
+test("high sounds have peaks too", async () => {
+  const { marta } = aBench();
+  const click = film("click.mp4", "-af", "asetrate=44100*6,aresample=44100", "-t", "0.6", "-c:a", "aac");
+  const id = await send(marta, click, "click.mp4");
+  await completeUpload(marta, id, NOON);
+  await work(marta);
+  // 440 Hz played six times as fast: 2,640 Hz.
+  expect(Math.max(...readPeaks(find(marta, id)?.peaks ?? null))).toBeGreaterThan(10);
+}, 60_000);
 
 test("pictures from the browser are kept where the server makes none, and nothing but pictures", async () => {
   const { marta, dario } = aBench();
@@ -345,4 +510,6 @@ test("pictures from the browser are kept where the server makes none, and nothin
   expect(await keepPictures(marta, id, made)).toEqual({ ok: true });
   expect(find(marta, id)).toMatchObject({ peaks: made.peaks });
   expect(await pictureLink(marta, id, "poster", NOON)).not.toBeNull();
+  const refused = aRecording(marta, { state: "refused" });
+  expect(await keepPictures(marta, refused, made)).toMatchObject({ ok: false, status: 404 });
 });

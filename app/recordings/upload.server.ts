@@ -1,9 +1,6 @@
 import {
-  AbortMultipartUploadCommand,
   CompleteMultipartUploadCommand,
   CreateMultipartUploadCommand,
-  HeadObjectCommand,
-  ListPartsCommand,
   UploadPartCommand,
 } from "@aws-sdk/client-s3";
 import { getSignedUrl } from "@aws-sdk/s3-request-presigner";
@@ -12,15 +9,17 @@ import { ulid } from "ulid";
 import { z } from "zod";
 import type { Scope, ShopScope } from "~/auth/scope.server";
 import { writeAudit } from "~/auth/write-audit.server";
-import { inTransaction } from "~/db.server";
+import { inTransaction, type Database } from "~/db.server";
 import { env } from "~/env.server";
 import { addTask } from "~/queue/add-task.server";
-import type { RecordingId } from "#drizzle/schema/ids";
+import type { RecordingId, ShopId } from "#drizzle/schema/ids";
 import { recordings } from "#drizzle/schema/index";
+import { addFileDeletion } from "./delete-recording.server";
 import { converterIsThere } from "./ffmpeg.server";
 import { fileProblem, partBytesOf, partsOf } from "./limits";
 import { recordingKey } from "./object-key";
 import { objectStorage, publicObjectStorage } from "./object-storage.server";
+import { isUnknownUpload, storedParts, storedSize } from "./stored-files.server";
 
 const ABANDONED_AFTER_MS = 7 * 86_400_000;
 const PART_LINK_S = 3600;
@@ -50,33 +49,6 @@ function findUpload(scope: Scope, recordingId: RecordingId) {
 }
 
 type Row = NonNullable<ReturnType<typeof findUpload>>;
-
-/** The parts that storage has, with their sizes; null when storage does not know the upload any more. */
-async function storedParts(
-  row: Pick<Row, "objectKey" | "uploadId">,
-): Promise<{ n: number; etag: string; size: number }[] | null> {
-  const found: { n: number; etag: string; size: number }[] = [];
-  let after: string | undefined;
-  try {
-    do {
-      const page = await objectStorage().send(
-        new ListPartsCommand({
-          Bucket: env().S3_BUCKET,
-          Key: row.objectKey,
-          UploadId: row.uploadId ?? "",
-          ...(after ? { PartNumberMarker: after } : {}),
-        }),
-      );
-      for (const part of page.Parts ?? [])
-        found.push({ n: part.PartNumber ?? 0, etag: part.ETag ?? "", size: part.Size ?? 0 });
-      after = page.IsTruncated ? page.NextPartNumberMarker : undefined;
-    } while (after);
-  } catch (error) {
-    if (error instanceof Error && error.name === "NoSuchUpload") return null;
-    throw error;
-  }
-  return found;
-}
 
 /** Parts that arrived whole. */
 function wholeParts(row: Row, stored: readonly { n: number; size: number }[]): number[] {
@@ -139,6 +111,15 @@ export async function beginUpload(
       done: wholeParts(open, stored),
       picturesBy,
     };
+  // Completed in storage, and the server stopped before it wrote that down: nothing is left to send.
+  if (open && (await storedSize(open.objectKey)) === open.sizeBytes)
+    return {
+      ok: true,
+      recordingId: open.id,
+      partBytes: open.partBytes,
+      done: partsOf(open.sizeBytes, open.partBytes).map(({ n }) => n),
+      picturesBy,
+    };
 
   const recordingId = ulid(now) as RecordingId;
   const objectKey = recordingKey(scope.shopId, recordingId);
@@ -152,6 +133,8 @@ export async function beginUpload(
   if (!uploadId) throw new Error("Object storage began no upload.");
   const partBytes = partBytesOf(order.sizeBytes);
   inTransaction(scope, (scope) => {
+    // Storage has thrown the older upload of this file away.
+    if (open) dropUpload(scope, open.id, now);
     scope.db
       .insert(recordings)
       .values({
@@ -242,24 +225,23 @@ export async function completeUpload(
       .filter((n) => !whole.has(n));
     if (lacking.length > 0)
       return { ok: false, status: 409, sentence: "Some parts have not arrived yet.", missing: lacking };
-    await objectStorage().send(
-      new CompleteMultipartUploadCommand({
-        Bucket: env().S3_BUCKET,
-        Key: row.objectKey,
-        UploadId: row.uploadId ?? "",
-        MultipartUpload: { Parts: stored.map(({ n, etag }) => ({ PartNumber: n, ETag: etag })) },
-      }),
-    );
+    try {
+      await objectStorage().send(
+        new CompleteMultipartUploadCommand({
+          Bucket: env().S3_BUCKET,
+          Key: row.objectKey,
+          UploadId: row.uploadId ?? "",
+          MultipartUpload: { Parts: stored.map(({ n, etag }) => ({ PartNumber: n, ETag: etag })) },
+        }),
+      );
+    } catch (error) {
+      // Asked twice at one time: the other one has closed it.
+      if (!isUnknownUpload(error)) throw error;
+    }
   }
   // Without the upload in storage it may have been completed just before the server stopped: the object tells.
-  let sizeBytes: number | undefined;
-  try {
-    sizeBytes = (
-      await objectStorage().send(new HeadObjectCommand({ Bucket: env().S3_BUCKET, Key: row.objectKey }))
-    ).ContentLength;
-  } catch {
-    return missing;
-  }
+  const sizeBytes = await storedSize(row.objectKey);
+  if (sizeBytes === null) return missing;
   if (sizeBytes !== row.sizeBytes)
     return {
       ok: false,
@@ -270,7 +252,7 @@ export async function completeUpload(
     const { changes } = scope.db
       .update(recordings)
       .set({ state: "checking", uploadId: null })
-      .where(and(eq(recordings.id, row.id), eq(recordings.state, "uploading")))
+      .where(and(eq(recordings.id, row.id), eq(recordings.state, "uploading"), isNull(recordings.deletedAt)))
       .run();
     if (changes === 0) return;
     addTask(
@@ -287,37 +269,41 @@ export async function completeUpload(
   return { ok: true };
 }
 
-async function abort(row: Pick<Row, "objectKey" | "uploadId">): Promise<void> {
-  try {
-    await objectStorage().send(
-      new AbortMultipartUploadCommand({
-        Bucket: env().S3_BUCKET,
-        Key: row.objectKey,
-        UploadId: row.uploadId ?? "",
-      }),
-    );
-  } catch (error) {
-    if (!(error instanceof Error) || error.name !== "NoSuchUpload") throw error;
-  }
+/** Drops an upload that is still going on: the row is deleted, its parts leave storage after. False when it is finished. */
+function dropUpload(
+  scope: Readonly<{ db: Database; shopId: ShopId }>,
+  id: RecordingId,
+  now: number,
+): boolean {
+  const { changes } = scope.db
+    .update(recordings)
+    .set({ deletedAt: now })
+    .where(
+      and(
+        eq(recordings.shopId, scope.shopId),
+        eq(recordings.id, id),
+        eq(recordings.state, "uploading"),
+        isNull(recordings.deletedAt),
+      ),
+    )
+    .run();
+  if (changes === 0) return false;
+  addFileDeletion(scope, id, now);
+  return true;
 }
 
-/** Gives an upload up: its parts leave storage, its row goes. */
-export async function cancelUpload(
-  scope: Scope,
-  recordingId: RecordingId,
-  now: number,
-): Promise<{ ok: true } | Refused> {
-  const row = findUpload(scope, recordingId);
-  if (!row) return missing;
-  if (row.state !== "uploading")
-    return {
-      ok: false,
-      status: 409,
-      sentence: "This upload is finished already. Delete the recording instead.",
-    };
-  await abort(row);
-  scope.db.update(recordings).set({ deletedAt: now }).where(eq(recordings.id, row.id)).run();
-  return { ok: true };
+/** Gives an upload up: its row goes at once, its parts leave storage after. */
+export function cancelUpload(scope: Scope, recordingId: RecordingId, now: number): { ok: true } | Refused {
+  return inTransaction(scope, (scope): { ok: true } | Refused => {
+    if (!findUpload(scope, recordingId)) return missing;
+    return dropUpload(scope, recordingId, now)
+      ? { ok: true }
+      : {
+          ok: false,
+          status: 409,
+          sentence: "This upload is finished already. Delete the recording instead.",
+        };
+  });
 }
 
 const Payload = z.object({ recordingId: z.string().transform((id) => id as RecordingId) });
@@ -325,19 +311,5 @@ const Payload = z.object({ recordingId: z.string().transform((id) => id as Recor
 /** Clears an upload away that nobody finished within a week. */
 export async function abandonUpload(scope: ShopScope, payload: unknown, now: number): Promise<void> {
   const { recordingId } = Payload.parse(payload);
-  const row = scope.db
-    .select()
-    .from(recordings)
-    .where(
-      and(
-        eq(recordings.shopId, scope.shopId),
-        eq(recordings.id, recordingId),
-        eq(recordings.state, "uploading"),
-        isNull(recordings.deletedAt),
-      ),
-    )
-    .get();
-  if (!row) return;
-  await abort(row);
-  scope.db.update(recordings).set({ deletedAt: now }).where(eq(recordings.id, row.id)).run();
+  inTransaction(scope, (scope) => dropUpload(scope, recordingId, now));
 }

@@ -1,6 +1,14 @@
-import { partsOf } from "~/recordings/limits";
+import {
+  missingParts,
+  retryAfterMs,
+  secondsLeft,
+  sentBytes,
+  withMoment,
+  type Moment,
+} from "~/recordings/upload-progress";
 import { makePictures } from "./make-pictures";
 import type { PartSlots } from "./part-slots";
+import { ask, FAULT, NO_NETWORK, NotNow, putPart, Refused, type Sending } from "./upload-requests";
 
 export type UploadStatus =
   "starting" | "sending" | "paused" | "waiting" | "closing" | "done" | "failed" | "cancelled";
@@ -16,34 +24,20 @@ export type UploadProgress = Readonly<{
   recordingId: string | null;
 }>;
 
-class Refused extends Error {}
+type Plan = { recordingId: string; partBytes: number; done: number[]; picturesBy: "server" | "browser" };
+type Part = ReturnType<typeof missingParts>[number];
 
-const NO_NETWORK = "No network. It goes on by itself when the network is back.";
+const STOPPED = "The upload stopped. Choose the file again: it goes on where it was.";
+const UNREADABLE = "The file cannot be read any more: it was moved, changed or deleted. Choose it again.";
 
-async function ask<T>(path: string, body: unknown): Promise<T> {
-  const response = await fetch(path, {
-    method: "POST",
-    headers: { "Content-Type": "application/json" },
-    body: JSON.stringify(body),
-  });
-  const answer = (await response.json().catch(() => null)) as (T & { error?: string }) | null;
-  // 409 and below are words for the person; anything from 500 on is tried again.
-  if (response.status >= 500 || !answer) throw new Error(`${path} answered ${response.status}`);
-  if (!response.ok && response.status !== 409) throw new Refused(answer.error ?? "The upload was refused.");
-  return answer;
-}
-
-/** Waits, and less when the network comes back in between. */
-function wait(ms: number): Promise<void> {
-  return new Promise((resolve) => {
-    const end = () => {
-      clearTimeout(timer);
-      removeEventListener("online", end);
-      resolve();
-    };
-    const timer = setTimeout(end, ms);
-    addEventListener("online", end);
-  });
+/** A file that was moved or changed after it was chosen fails like a lost network; only reading it tells them apart. */
+async function canBeRead(piece: Blob): Promise<boolean> {
+  try {
+    await piece.slice(0, 1).arrayBuffer();
+    return true;
+  } catch {
+    return false;
+  }
 }
 
 /**
@@ -56,9 +50,9 @@ export class FileUpload {
   #recordingId: string | null = null;
   #partBytes = 1;
   #done = new Set<number>();
-  #moving = new Map<number, { request: XMLHttpRequest; sent: number }>();
-  #wake: (() => void)[] = [];
-  #marks: { at: number; bytes: number }[] = [];
+  #moving = new Map<number, { sending: Sending; sent: number }>();
+  #wake = new Set<() => void>();
+  #moments: Moment[] = [];
 
   constructor(
     readonly file: File,
@@ -66,101 +60,131 @@ export class FileUpload {
     private readonly onChange: (progress: UploadProgress) => void,
   ) {}
 
-  get #stopped(): boolean {
+  get #over(): boolean {
     return this.#status === "cancelled" || this.#status === "failed";
   }
 
-  #sentBytes(): number {
-    let sent = 0;
-    for (const { n, from, to } of partsOf(this.file.size, this.#partBytes))
-      if (this.#done.has(n)) sent += to - from;
-    for (const { sent: bytes } of this.#moving.values()) sent += bytes;
-    return Math.min(sent, this.file.size);
+  get #held(): boolean {
+    return this.#over || this.#status === "paused";
+  }
+
+  get #plan() {
+    return { sizeBytes: this.file.size, partBytes: this.#partBytes };
   }
 
   #tell(status = this.#status, sentence = this.#sentence): void {
     this.#status = status;
     this.#sentence = sentence;
-    const [now, sentBytes] = [Date.now(), this.#sentBytes()];
-    this.#marks = [...this.#marks.filter(({ at }) => now - at < 10_000), { at: now, bytes: sentBytes }];
-    const first = this.#marks[0];
-    const speed = first && now > first.at ? (sentBytes - first.bytes) / (now - first.at) : 0;
+    const moving = Array.from(this.#moving.values(), ({ sent }) => sent);
+    const bytes = this.#recordingId === null ? 0 : sentBytes(this.#plan, this.#done, moving);
+    this.#moments = withMoment(this.#moments, { at: Date.now(), bytes });
     this.onChange({
       status,
       sentence,
-      sentBytes,
+      sentBytes: bytes,
       totalBytes: this.file.size,
-      secondsLeft:
-        status === "sending" && speed > 0 ? Math.ceil((this.file.size - sentBytes) / speed / 1000) : null,
+      secondsLeft: status === "sending" ? secondsLeft(this.#moments, this.file.size) : null,
       recordingId: this.#recordingId,
+    });
+  }
+
+  #wakeAll(): void {
+    for (const wake of this.#wake) wake();
+  }
+
+  /** Rests until it is woken, at the latest after `ms`. */
+  #rest(ms: number): Promise<void> {
+    return new Promise((resolve) => {
+      const end = () => {
+        clearTimeout(timer);
+        this.#wake.delete(end);
+        resolve();
+      };
+      const timer = Number.isFinite(ms) ? setTimeout(end, ms) : undefined;
+      this.#wake.add(end);
     });
   }
 
   /** No new part starts; those on their way arrive, so that nothing is sent twice. */
   pause(): void {
-    if (this.#status === "sending" || this.#status === "waiting") this.#tell("paused", "");
+    if (this.#status !== "sending" && this.#status !== "waiting") return;
+    this.#tell("paused", "");
+    this.#wakeAll();
   }
 
   resume(): void {
     if (this.#status !== "paused") return;
-    this.#marks = [];
+    this.#moments = [];
     this.#tell("sending", "");
-    for (const wake of this.#wake.splice(0)) wake();
+    this.#wakeAll();
   }
 
+  /** Gives the upload up: what was sent of it leaves storage. */
   async cancel(): Promise<void> {
-    this.#tell("cancelled", "");
-    for (const { request } of this.#moving.values()) request.abort();
-    for (const wake of this.#wake.splice(0)) wake();
+    this.leave();
     if (this.#recordingId)
       await ask(`/api/uploads/${this.#recordingId}`, { intent: "cancel" }).catch(() => undefined);
   }
 
-  /** Sends what is missing until all of it is there. */
+  /** Stops sending; what was sent stays in storage, as after a closed tab. */
+  leave(): void {
+    this.#tell("cancelled", "");
+    for (const { sending } of this.#moving.values()) sending.stop();
+    this.#wakeAll();
+  }
+
+  /** Sends what is missing until all of it is there. After a failure it may be called again. */
   async run(): Promise<void> {
+    const offline = () => {
+      if (this.#status !== "sending" && this.#status !== "waiting") return;
+      this.#tell("waiting", NO_NETWORK);
+      // They are dead, but a browser may need minutes to notice.
+      for (const { sending } of this.#moving.values()) sending.stop();
+    };
+    const online = () => this.#wakeAll();
+    addEventListener("offline", offline);
+    addEventListener("online", online);
     try {
-      const { name: fileName, size: sizeBytes, lastModified } = this.file;
-      const plan = await this.#insist(() =>
-        ask<{ recordingId: string; partBytes: number; done: number[]; picturesBy: "server" | "browser" }>(
-          "/api/uploads",
-          {
-            fileName,
-            sizeBytes,
-            lastModified,
-          },
-        ),
-      );
-      if (this.#stopped || !plan) return;
-      this.#recordingId = plan.recordingId;
-      this.#partBytes = plan.partBytes;
-      this.#done = new Set(plan.done);
-      this.#tell("sending", "");
-      for (;;) {
-        await this.#sendMissing();
-        if (this.#stopped) return;
-        this.#tell("closing", "");
-        const closed = await this.#insist(() =>
-          ask<{ ok: boolean; missing?: number[]; error?: string }>(`/api/uploads/${plan.recordingId}`, {
-            intent: "complete",
-          }),
-        );
-        if (!closed || this.#stopped) return;
-        if (closed.ok) {
-          if (plan.picturesBy === "browser") await this.#sendPictures();
-          return this.#tell("done", "");
-        }
-        if (!closed.missing) throw new Refused(closed.error ?? "The upload was refused.");
-        for (const n of closed.missing) this.#done.delete(n);
-        this.#tell("sending", "");
-      }
+      this.#tell("starting", "");
+      await this.#send();
     } catch (error) {
-      if (this.#status !== "cancelled")
-        this.#tell(
-          "failed",
-          error instanceof Refused
-            ? error.message
-            : "The upload stopped. Choose the file again: it goes on where it was.",
-        );
+      if (!this.#over) this.#tell("failed", error instanceof Refused ? error.message : STOPPED);
+      for (const { sending } of this.#moving.values()) sending.stop();
+      this.#wakeAll();
+    } finally {
+      removeEventListener("offline", offline);
+      removeEventListener("online", online);
+    }
+  }
+
+  async #send(): Promise<void> {
+    const { name: fileName, size: sizeBytes, lastModified } = this.file;
+    const plan = await this.#insist(() => ask<Plan>("/api/uploads", { fileName, sizeBytes, lastModified }));
+    if (!plan) return;
+    this.#recordingId = plan.recordingId;
+    this.#partBytes = plan.partBytes;
+    this.#done = new Set(plan.done);
+    // Cancelled while it began.
+    if (this.#over) return void (await this.cancel());
+    if (this.#status !== "paused") this.#tell("sending", "");
+    for (;;) {
+      const parts = missingParts(this.#plan, this.#done);
+      await Promise.all(parts.map((part) => this.#insist(() => this.#sendPart(part), this.slots)));
+      if (this.#over) return;
+      if (this.#status !== "paused") this.#tell("closing", "");
+      const closed = await this.#insist(() =>
+        ask<{ ok: boolean; missing?: number[]; error?: string }>(`/api/uploads/${plan.recordingId}`, {
+          intent: "complete",
+        }),
+      );
+      if (!closed || this.#over) return;
+      if (closed.ok) {
+        if (plan.picturesBy === "browser") await this.#sendPictures();
+        return this.#tell("done", "");
+      }
+      if (!closed.missing) throw new Refused(closed.error ?? "The upload was refused.");
+      for (const n of closed.missing) this.#done.delete(n);
+      this.#tell("sending", "");
     }
   }
 
@@ -174,72 +198,62 @@ export class FileUpload {
     }
   }
 
-  async #sendMissing(): Promise<void> {
-    const todo = partsOf(this.file.size, this.#partBytes).filter(({ n }) => !this.#done.has(n));
-    await Promise.all(
-      todo.map(async (part) => {
-        const giveBack = await this.slots.take();
-        try {
-          await this.#sendPart(part);
-        } finally {
-          giveBack();
-        }
-      }),
-    );
-  }
-
-  async #sendPart({ n, from, to }: { n: number; from: number; to: number }): Promise<void> {
-    await this.#insist(async () => {
-      const { urls } = await ask<{ urls: Record<number, string> }>(`/api/uploads/${this.#recordingId}`, {
-        intent: "sign",
-        parts: [n],
-      });
-      const url = urls[n];
-      if (!url) throw new Error("no link for the part");
-      await this.#put(n, url, this.file.slice(from, to));
-      this.#done.add(n);
+  async #sendPart({ n, from, to }: Part): Promise<void> {
+    const { urls } = await ask<{ urls: Record<number, string> }>(`/api/uploads/${this.#recordingId}`, {
+      intent: "sign",
+      parts: [n],
     });
+    if (this.#over) return;
+    const url = urls[n];
+    if (!url) throw new NotNow(FAULT);
+    const piece = this.file.slice(from, to);
+    const moving = {
+      sent: 0,
+      sending: putPart(url, piece, (bytes) => {
+        moving.sent = Math.min(bytes, to - from);
+        this.#tell();
+      }),
+    };
+    this.#moving.set(n, moving);
+    try {
+      await moving.sending.arrived;
+      this.#done.add(n);
+    } catch (error) {
+      if (!(await canBeRead(piece))) throw new Refused(UNREADABLE);
+      throw error;
+    } finally {
+      this.#moving.delete(n);
+      this.#tell();
+    }
   }
 
-  /** Tries until it works, waits while paused or without network, gives up on a refusal or when cancelled. */
-  async #insist<T>(work: () => Promise<T>): Promise<T | undefined> {
-    for (let tries = 0; !this.#stopped; tries += 1) {
-      if (this.#status === "paused") await new Promise<void>((resolve) => this.#wake.push(resolve));
-      if (this.#stopped) return undefined;
+  /**
+   * Tries until it works; rests while paused and between tries, gives up on a refusal or when it is over. A slot is held
+   * while it works and between tries, never during a pause, which may be long and is no reason for other files to wait.
+   */
+  async #insist<T>(work: () => Promise<T>, slots?: PartSlots): Promise<T | undefined> {
+    let tries = 0;
+    while (!this.#over) {
+      while (this.#status === "paused") await this.#rest(Infinity);
+      const giveBack = await slots?.take();
       try {
-        const result = await work();
-        if (this.#status === "waiting") this.#tell("sending", "");
-        return result;
-      } catch (error) {
-        if (error instanceof Refused) throw error;
-        if (this.#stopped) return undefined;
-        // Also while it begins and while it is closed: whoever looks is told what it waits for.
-        if (["starting", "sending", "closing"].includes(this.#status)) this.#tell("waiting", NO_NETWORK);
-        await wait(Math.min(15_000, 500 * 2 ** tries));
+        while (!this.#held) {
+          try {
+            const result = await work();
+            if (this.#status === "waiting") this.#tell("sending", "");
+            return result;
+          } catch (error) {
+            if (!(error instanceof NotNow)) throw error;
+            if (this.#over) return undefined;
+            if (!this.#held) this.#tell("waiting", error.message);
+            tries += 1;
+            if (!this.#held) await this.#rest(retryAfterMs(tries - 1));
+          }
+        }
+      } finally {
+        giveBack?.();
       }
     }
     return undefined;
-  }
-
-  #put(n: number, url: string, body: Blob): Promise<void> {
-    return new Promise((resolve, reject) => {
-      const request = new XMLHttpRequest();
-      const moving = { request, sent: 0 };
-      this.#moving.set(n, moving);
-      request.open("PUT", url);
-      request.upload.onprogress = (event) => {
-        moving.sent = event.loaded;
-        this.#tell();
-      };
-      request.onload = () =>
-        request.status === 200 ? resolve() : reject(new Error(`part ${n} answered ${request.status}`));
-      request.onerror = () => reject(new Error(`part ${n}: no network`));
-      request.onabort = () => reject(new Error(`part ${n} was stopped`));
-      request.onloadend = () => {
-        this.#moving.delete(n);
-        this.#tell();
-      };
-      request.send(body);
-    });
   }
 }

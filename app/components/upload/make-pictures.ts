@@ -1,8 +1,9 @@
 import { soundPeaks } from "~/recordings/sound-peaks";
 import { STORYBOARD, storyboardPlan } from "~/recordings/storyboard";
 
-/** Above this length the whole sound would not fit into a phone's memory. */
+/** Above this length or size the whole sound would not fit into a phone's memory. */
 const LONGEST_SOUND_MS = 15 * 60_000;
+const MOST_SOUND_BYTES = 400 * 1024 ** 2;
 
 function seek(video: HTMLVideoElement, seconds: number): Promise<void> {
   return new Promise((resolve, reject) => {
@@ -33,7 +34,7 @@ function asJpeg(canvas: HTMLCanvasElement): Promise<Blob> {
 }
 
 async function peaksOf(file: File, durationMs: number): Promise<string | null> {
-  if (durationMs > LONGEST_SOUND_MS) return null;
+  if (durationMs > LONGEST_SOUND_MS || file.size > MOST_SOUND_BYTES) return null;
   try {
     const sound = await new OfflineAudioContext(1, 1, 8000).decodeAudioData(await file.arrayBuffer());
     const samples = sound.getChannelData(0);

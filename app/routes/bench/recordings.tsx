@@ -9,9 +9,10 @@ import { EmptyState, Page, Sheet } from "~/components/ui/page";
 import { scopeContext, viewerContext } from "~/context";
 import { parseForm, refuse } from "~/forms/parse-form";
 import { lengthWords } from "~/lessons/steps";
+import { deleteRecording } from "~/recordings/delete-recording.server";
 import { sizeWords } from "~/recordings/limits";
-import { deleteRecording, listRecordings, renameRecording } from "~/recordings/list-recordings.server";
-import { IN_WORK, STATE_WORDS } from "~/recordings/state-words";
+import { listRecordings, renameRecording } from "~/recordings/list-recordings.server";
+import { STATE_WORDS } from "~/recordings/state-words";
 import type { RecordingId } from "#drizzle/schema/ids";
 import type { Route } from "./+types/recordings";
 
@@ -45,7 +46,7 @@ export async function action({ request, context }: Route.ActionArgs) {
     if (!renameRecording(scope, form.value.recording, form.value.title)) notFound("recording");
     return redirect(href("/bench/recordings"));
   }
-  const deleted = await deleteRecording(scope, form.value.recording, Date.now());
+  const deleted = deleteRecording(scope, form.value.recording, Date.now());
   if (deleted.ok) return redirect(href("/bench/recordings"));
   return deleted.reason === "missing"
     ? notFound("recording")
@@ -90,8 +91,16 @@ function RecordingRow({
         </p>
         <p>
           <strong>{STATE_WORDS[row.state]}</strong>
-          {row.stateReason ? `. ${row.stateReason}` : ""}
-          {row.lessonTitle ? ` In the lesson “${row.lessonTitle}”.` : ""}
+          {[
+            row.stateReason,
+            row.stopped
+              ? "The work on it stopped with a fault. The owner finds it under Shop settings, failed background tasks."
+              : "",
+            row.lessonTitle ? `In the lesson “${row.lessonTitle}”.` : "",
+          ]
+            .filter(Boolean)
+            .map((sentence) => `. ${sentence.replace(/\.$/, "")}`)
+            .join("")}
         </p>
         <div className="empty:hidden">
           <FormProblem refusal={mine} />
@@ -100,7 +109,7 @@ function RecordingRow({
           {row.state === "ready" ? (
             <ButtonLink to={`/bench/lessons/new?recording=${row.id}`}>Make a lesson</ButtonLink>
           ) : null}
-          {row.state === "uploading" ? (
+          {row.state === "uploading" && row.mine ? (
             <ButtonLink to={href("/bench/recordings/upload")} look="ghost">
               Go on uploading
             </ButtonLink>
@@ -140,7 +149,7 @@ export default function Recordings({
   actionData,
 }: Route.ComponentProps) {
   const { revalidate } = useRevalidator();
-  const working = recordings.some(({ state }) => IN_WORK.includes(state));
+  const working = recordings.some((row) => row.working);
   useEffect(() => {
     if (!working) return;
     const timer = setInterval(() => void revalidate(), 2500);

@@ -1,20 +1,27 @@
 import { href, Link } from "react-router";
 import { requirePermission } from "~/auth/require.server";
-import { UploadList } from "~/components/upload/upload-list";
 import { Page } from "~/components/ui/page";
-import { scopeContext } from "~/context";
+import { UnfinishedUploads } from "~/components/upload/unfinished-uploads";
+import { UploadList } from "~/components/upload/upload-list";
+import { scopeContext, viewerContext } from "~/context";
+import { converterIsThere } from "~/recordings/ffmpeg.server";
+import { unfinishedUploads } from "~/recordings/list-recordings.server";
 import type { Route } from "./+types/upload";
 
 export function meta() {
   return [{ title: "Upload recordings · Castlenut" }];
 }
 
-export function loader({ context }: Route.LoaderArgs) {
-  requirePermission(context.get(scopeContext), "recording:upload");
-  return null;
+export async function loader({ context }: Route.LoaderArgs) {
+  const scope = context.get(scopeContext);
+  requirePermission(scope, "recording:upload");
+  const { timeZone, userId } = context.get(viewerContext);
+  return { unfinished: unfinishedUploads(scope), converter: await converterIsThere(), timeZone, userId };
 }
 
-export default function Upload() {
+export default function Upload({
+  loaderData: { unfinished, converter, timeZone, userId },
+}: Route.ComponentProps) {
   return (
     <Page title="Upload recordings" under={<Link to={href("/bench/recordings")}>Recordings</Link>} narrow>
       <noscript>
@@ -22,7 +29,8 @@ export default function Upload() {
           Uploading needs JavaScript: files go to storage in parts, so that a lost network loses nothing.
         </p>
       </noscript>
-      <UploadList />
+      <UploadList userId={userId} converter={converter} />
+      <UnfinishedUploads uploads={unfinished} timeZone={timeZone} />
     </Page>
   );
 }

@@ -22,6 +22,7 @@ const KIND_WORDS: Readonly<Record<TaskKind, string>> = {
   "prepare-recording": "Make poster, frames and sound peaks",
   "convert-recording": "Convert a recording so that browsers play it",
   "abandon-upload": "Clear away an upload that was never finished",
+  "delete-recording": "Take the files of a deleted recording out of storage",
 };
 
 export function meta() {
@@ -62,7 +63,7 @@ export default function Tasks({ loaderData: { tasks, timeZone } }: Route.Compone
                 <p className="text-sm text-ink-soft">
                   Asked for {localTime(task.createdAt, timeZone)}; {task.attempts}{" "}
                   {task.attempts === 1 ? "try" : "tries"};{" "}
-                  {task.failedAt ? "given up" : `next try ${localTime(task.runAt, timeZone)}`}
+                  {task.failedAt ? "no more by itself" : `next try ${localTime(task.runAt, timeZone)}`}
                 </p>
                 <Form method="post" className="flex gap-3">
                   <input type="hidden" name="task" value={task.id} />
@@ -70,7 +71,7 @@ export default function Tasks({ loaderData: { tasks, timeZone } }: Route.Compone
                     Try again
                   </Button>
                   <Button name="intent" value="give-up" look="quiet">
-                    Let it go
+                    Give up
                   </Button>
                 </Form>
               </li>
