@@ -232,6 +232,7 @@ function bodies({ ids, more, form }: Shop): Record<string, Body> {
     "routes/bench/publish": { form: { version, note: "" } },
     "routes/bench/doubt": { form: { reason: "It is right, page 31." } },
     "routes/api/upload": { json: { intent: "complete" } },
+    "routes/api/upload-pictures": { form: { peaks: "" } },
   };
 }
 
