@@ -232,6 +232,12 @@ function bodies({ ids, more, form }: Shop): Record<string, Body> {
     "routes/bench/publish": { form: { version, note: "" } },
     "routes/bench/doubt": { form: { reason: "It is right, page 31." } },
     "routes/api/upload": { json: { intent: "complete" } },
+    "routes/api/upload-pictures": {
+      multipart: {
+        poster: { name: "poster.jpg", mimeType: "image/jpeg", buffer: Buffer.from([0xff, 0xd8, 0xff, 0xd9]) },
+        peaks: "[0,1]",
+      },
+    },
     "routes/api/upload-pictures": { form: { peaks: "" } },
   };
 }
