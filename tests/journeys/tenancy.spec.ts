@@ -238,7 +238,6 @@ function bodies({ ids, more, form }: Shop): Record<string, Body> {
         peaks: "[0,1]",
       },
     },
-    "routes/api/upload-pictures": { form: { peaks: "" } },
   };
 }
 
