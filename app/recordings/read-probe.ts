@@ -1,9 +1,10 @@
 import type { Input } from "mediabunny";
 import type { Probe } from "./judge-video";
 
+/** By the names that mediabunny gives its formats. */
 const CONTAINERS: Readonly<Record<string, Probe["container"]>> = {
   MP4: "mp4",
-  QuickTime: "mov",
+  "QuickTime File Format": "mov",
   WebM: "webm",
   Matroska: "mkv",
 };

@@ -227,6 +227,28 @@ test("a text renamed to .mp4 and a file that was cut off are refused by their co
   }
 }, 60_000);
 
+test("H.264 in MOV plays as it is, turned as the phone held it, and is served as MP4", async () => {
+  const { marta } = aBench();
+  const picture = ["-c:v", "libx264", "-pix_fmt", "yuv420p", "-c:a", "aac"];
+  const flat = film("flat.mov", ...picture);
+  const turned = join(folder, "turned.mov");
+  const bytes = readFileSync(flat);
+  // The matrix of the first track's header, a quarter turn (ISO/IEC 14496-12, 8.3.2: 40 bytes behind its name).
+  const matrix = bytes.indexOf("tkhd") + 4 + 40;
+  [0, 0x10000, 0, -0x10000, 0, 0, 0, 0, 0x40000000].forEach((n, at) =>
+    bytes.writeInt32BE(n, matrix + at * 4),
+  );
+  writeFileSync(turned, bytes);
+  const id = await send(marta, turned, "turned.mov");
+  await completeUpload(marta, id, NOON);
+  await work(marta);
+  const row = find(marta, id);
+  expect(row).toMatchObject({ state: "ready", container: "mov", width: 180, height: 320 });
+  expect(row?.playKey).toBe(row?.objectKey);
+  const link = await playbackLink(marta, id, NOON);
+  expect((await fetch(link?.url ?? "", { method: "GET" })).headers.get("content-type")).toBe("video/mp4");
+}, 60_000);
+
 test("VP9 in WebM plays as it is; HEVC is converted to H.264 and then plays", async () => {
   const { marta } = aBench();
   const webm = film(
@@ -262,7 +284,10 @@ test("VP9 in WebM plays as it is; HEVC is converted to H.264 and then plays", as
     { recordingId: second },
     NOON,
   );
-  expect(find(marta, second)).toMatchObject({ state: "converting", videoCodec: "hevc" });
+  expect(find(marta, second)).toMatchObject({ state: "converting", container: "mov", videoCodec: "hevc" });
+  expect(find(marta, second)?.stateReason).toBe(
+    "This recording is HEVC (high efficiency) in MOV, which browsers do not all play. It is being converted.",
+  );
   expect(await playbackLink(marta, second, NOON)).toBeNull();
   await work(marta);
   const row = find(marta, second);

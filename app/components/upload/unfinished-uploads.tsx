@@ -18,7 +18,7 @@ export function UnfinishedUploads({
   const left = uploads.filter(({ id }) => !here.has(id));
   if (left.length === 0) return null;
   return (
-    <section aria-labelledby="unfinished" className="mt-8 grid gap-3">
+    <section aria-labelledby="unfinished" className="mt-8 grid grid-cols-1 gap-3">
       <h2 id="unfinished" className="text-lg font-semibold">
         Not finished
       </h2>

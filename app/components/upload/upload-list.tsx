@@ -23,7 +23,7 @@ export function UploadList({ userId, converter }: { userId: string; converter: b
   };
 
   return (
-    <div className="grid gap-6">
+    <div className="grid grid-cols-1 gap-6">
       <div
         onDragOver={(event) => {
           event.preventDefault();
@@ -35,7 +35,7 @@ export function UploadList({ userId, converter }: { userId: string; converter: b
           setOver(false);
           addAll(event.dataTransfer.files);
         }}
-        className={`grid justify-items-center gap-3 rounded-md border-2 border-dashed px-4 py-10 text-center ${over ? "border-enamel bg-enamel-tint" : "border-line-strong"}`}
+        className={`grid grid-cols-1 justify-items-center gap-3 rounded-md border-2 border-dashed px-4 py-10 text-center ${over ? "border-enamel bg-enamel-tint" : "border-line-strong"}`}
       >
         <label htmlFor="recordings" className="text-lg font-semibold">
           Choose recordings

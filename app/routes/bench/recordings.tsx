@@ -65,6 +65,13 @@ function RecordingRow({
   refusal: Route.ComponentProps["actionData"];
 }) {
   const mine = refusal && refusal.typed.recording === row.id ? refusal : undefined;
+  const sentences = [
+    row.stateReason,
+    row.stopped
+      ? "The work on it stopped with a fault. The owner finds it under Shop settings, failed background tasks."
+      : "",
+    row.lessonTitle ? `In the lesson “${row.lessonTitle}”.` : "",
+  ].filter(Boolean);
   return (
     <li className="flex flex-wrap gap-4 border-b border-line px-5 py-4 last:border-b-0">
       {row.hasPoster ? (
@@ -91,16 +98,7 @@ function RecordingRow({
         </p>
         <p>
           <strong>{STATE_WORDS[row.state]}</strong>
-          {[
-            row.stateReason,
-            row.stopped
-              ? "The work on it stopped with a fault. The owner finds it under Shop settings, failed background tasks."
-              : "",
-            row.lessonTitle ? `In the lesson “${row.lessonTitle}”.` : "",
-          ]
-            .filter(Boolean)
-            .map((sentence) => `. ${sentence.replace(/\.$/, "")}`)
-            .join("")}
+          {sentences.length > 0 ? `. ${sentences.join(" ")}` : ""}
         </p>
         <div className="empty:hidden">
           <FormProblem refusal={mine} />
