@@ -79,7 +79,7 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
           </div>
           <nav
             aria-label="Places"
-            className="order-3 -mx-2 flex w-full gap-1 overflow-x-auto xl:order-3 xl:mx-0 xl:ml-auto xl:w-auto"
+            className="order-3 -mx-2 flex w-full flex-wrap gap-x-1 xl:order-3 xl:mx-0 xl:ml-auto xl:w-auto"
           >
             {places.map((place) => (
               <NavLink

@@ -4,18 +4,22 @@ import { ButtonLink } from "~/components/ui/button";
 import { EmptyState, Page, Sheet } from "~/components/ui/page";
 import { scopeContext } from "~/context";
 import { stateWords } from "~/lessons/bench-state";
-import { listBench } from "~/lessons/list-bench.server";
+import { listBench, listReadyRecordings } from "~/lessons/list-bench.server";
 import { listDoubts } from "~/publishing/doubts.server";
 import type { Route } from "./+types/bench";
 
 export function meta() {
-  return [{ title: "Bench, Castlenut" }];
+  return [{ title: "Bench · Castlenut" }];
 }
 
 export function loader({ context }: Route.LoaderArgs) {
   const scope = context.get(scopeContext);
   requirePermission(scope, "lesson:edit");
-  return { lessons: listBench(scope), doubts: listDoubts(scope).open.length };
+  return {
+    lessons: listBench(scope),
+    ready: listReadyRecordings(scope).length,
+    doubts: listDoubts(scope).open.length,
+  };
 }
 
 function count(n: number, one: string, many: string): string {
@@ -33,7 +37,7 @@ function todo(lesson: Route.ComponentProps["loaderData"]["lessons"][number]): st
   return parts.length > 0 ? parts.join(" · ") : "Nothing open";
 }
 
-export default function Bench({ loaderData: { lessons, doubts } }: Route.ComponentProps) {
+export default function Bench({ loaderData: { lessons, ready, doubts } }: Route.ComponentProps) {
   const upload = <ButtonLink to={href("/bench/recordings/upload")}>Upload a recording</ButtonLink>;
   const create = (
     <ButtonLink look="ghost" to={href("/bench/lessons/new")}>
@@ -64,8 +68,20 @@ export default function Bench({ loaderData: { lessons, doubts } }: Route.Compone
     >
       {lessons.length === 0 ? (
         <EmptyState title="No lesson yet">
-          <p>Film a job, upload the recording, then make a lesson of it: chapters, values, sources.</p>
-          <ButtonLink to={href("/bench/recordings/upload")}>Upload the first recording</ButtonLink>
+          {ready > 0 ? (
+            <>
+              <p>
+                {ready === 1 ? "A recording is ready." : `${ready} recordings are ready.`} Make a lesson of
+                it: chapters, values, sources.
+              </p>
+              <ButtonLink to={href("/bench/lessons/new")}>Make the first lesson</ButtonLink>
+            </>
+          ) : (
+            <>
+              <p>Film a job, upload the recording, then make a lesson of it: chapters, values, sources.</p>
+              <ButtonLink to={href("/bench/recordings/upload")}>Upload the first recording</ButtonLink>
+            </>
+          )}
         </EmptyState>
       ) : (
         <Sheet>

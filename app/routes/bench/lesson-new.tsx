@@ -16,7 +16,7 @@ import { refusedDraft, refusedForm } from "./answer-draft.server";
 import type { Route } from "./+types/lesson-new";
 
 export function meta() {
-  return [{ title: "New lesson, Castlenut" }];
+  return [{ title: "New lesson · Castlenut" }];
 }
 
 export function loader({ context, request }: Route.LoaderArgs) {

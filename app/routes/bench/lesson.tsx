@@ -30,7 +30,7 @@ import { refusedDraft, refusedForm } from "./answer-draft.server";
 import type { Route } from "./+types/lesson";
 
 export function meta({ loaderData }: Route.MetaArgs) {
-  return [{ title: `${loaderData?.draft.lesson.title ?? "Lesson"}, bench, Castlenut` }];
+  return [{ title: `${loaderData?.draft.lesson.title ?? "Lesson"}, bench · Castlenut` }];
 }
 
 export function loader({ params, request, context }: Route.LoaderArgs) {

@@ -23,7 +23,7 @@ const Kind = z.enum(Object.keys(KIND_WORDS) as [MarkKind, ...MarkKind[]]);
 const NewMark = z.object({ kind: Kind, markId: formId });
 
 export function meta() {
-  return [{ title: "New mark, Castlenut" }];
+  return [{ title: "New mark · Castlenut" }];
 }
 
 export function loader({ params, request, context }: Route.LoaderArgs) {

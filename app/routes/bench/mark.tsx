@@ -16,7 +16,7 @@ import { refusedDraft, refusedForm } from "./answer-draft.server";
 import type { Route } from "./+types/mark";
 
 export function meta() {
-  return [{ title: "Change a mark, Castlenut" }];
+  return [{ title: "Change a mark · Castlenut" }];
 }
 
 function find(scope: Scope, params: Route.LoaderArgs["params"]) {

@@ -7,6 +7,7 @@ import { Select } from "~/components/ui/field";
 import { EmptyState, Page } from "~/components/ui/page";
 import { scopeContext, viewerContext } from "~/context";
 import { filterLibrary, libraryChoices } from "~/lessons/filter-library";
+import { listReadyRecordings } from "~/lessons/list-bench.server";
 import { listLibrary } from "~/lessons/list-library.server";
 import { SYSTEM_WORDS } from "~/lessons/mark-words";
 import { lengthWords } from "~/lessons/steps";
@@ -37,6 +38,7 @@ export function loader({ context, url }: Route.LoaderArgs) {
   return {
     wanted,
     total: all.length,
+    ready: all.length === 0 && can(scope.role, "lesson:edit") && listReadyRecordings(scope).length > 0,
     choices: libraryChoices(all),
     shown: shown.map((lesson) => ({
       ...lesson,
@@ -48,8 +50,8 @@ export function loader({ context, url }: Route.LoaderArgs) {
 
 type Data = Route.ComponentProps["loaderData"];
 
-/** What the first person of an empty shop does first. */
-function FirstSteps({ viewer }: { viewer: Data["viewer"] }) {
+/** What the people of an empty shop do first; `ready`: a recording waits to become a lesson. */
+function FirstSteps({ viewer, ready }: Pick<Data, "viewer" | "ready">) {
   if (!can(viewer.role, "recording:upload"))
     return (
       <EmptyState title="Nothing is published yet.">
@@ -65,7 +67,10 @@ function FirstSteps({ viewer }: { viewer: Data["viewer"] }) {
       <ol className="grid list-inside list-decimal gap-1 text-left">
         {owner ? <li>Invite an instructor, so that a second person can check values.</li> : null}
         <li>Upload a recording of a job.</li>
-        <li>Chapter it on the bench, write down its values with their sources, publish it.</li>
+        <li>
+          Chapter it on the <Link to={href("/bench")}>bench</Link>, write down its values with their sources,
+          publish it.
+        </li>
       </ol>
       <div className="flex flex-wrap justify-center gap-3">
         {owner ? (
@@ -73,7 +78,11 @@ function FirstSteps({ viewer }: { viewer: Data["viewer"] }) {
             Invite an instructor
           </ButtonLink>
         ) : null}
-        <ButtonLink to="/bench/recordings/upload">Upload a recording</ButtonLink>
+        {ready ? (
+          <ButtonLink to={href("/bench")}>Go on at the bench</ButtonLink>
+        ) : (
+          <ButtonLink to={href("/bench/recordings/upload")}>Upload a recording</ButtonLink>
+        )}
       </div>
     </EmptyState>
   );
@@ -175,7 +184,7 @@ const WIDTHS = [
 ] as const;
 
 export default function Library({
-  loaderData: { wanted, total, choices, shown, viewer },
+  loaderData: { wanted, total, ready, choices, shown, viewer },
 }: Route.ComponentProps) {
   const systems = choices.systems.filter((system) => shown.some((lesson) => lesson.system === system));
   return (
@@ -188,7 +197,7 @@ export default function Library({
       }
     >
       {total === 0 ? (
-        <FirstSteps viewer={viewer} />
+        <FirstSteps viewer={viewer} ready={ready} />
       ) : (
         <>
           <Filters wanted={wanted} choices={choices} />
