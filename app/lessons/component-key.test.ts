@@ -70,10 +70,17 @@ test("words outside the vocabulary still give one key in any order", () => {
 test("rubber-bushed joints are known by any of their names", () => {
   expect(isBushedJoint("Lower wishbone pivot bolt")).toBe(true);
   expect(isBushedJoint("damper lower bolt")).toBe(true);
+  expect(isBushedJoint("Arm bushing bolt")).toBe(true);
+  expect(isBushedJoint("rocker arm bushing")).toBe(false);
   expect(isBushedJoint("lug nut")).toBe(false);
   expect(isBushedJoint("Lower control arm ball joint nut")).toBe(false);
   expect(isBushedJoint("Trailing arm to hub carrier bolt")).toBe(false);
   expect(isBushedJoint("Strut to knuckle bolts")).toBe(false);
+});
+
+test("upper and lower stay two fasteners", () => {
+  expect(componentKey("upper control arm bolt")).not.toBe(componentKey("lower control arm bolt"));
+  expect(componentKey("control arm bolt", "lower")).toBe(componentKey("lower control arm bolt"));
 });
 
 test("every other name can be listed for search", () => {
