@@ -16,7 +16,7 @@ export default defineConfig({
       "tests/*.test.ts",
       "tests/reference/**/*.test.ts",
     ],
-    testTimeout: 20_000,
-    hookTimeout: 30_000,
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
   },
 });
