@@ -213,7 +213,7 @@ test("a body without a length is refused; one that is cut leaves nothing", async
   expect([status, document]).toEqual([411, expect.stringContaining("MissingContentLength")]);
   await put("survivor", "before");
   await rawPut(await putLink("survivor"), { "content-length": "1000" }, "only the beginning", true);
-  await expect.poll(drafts).toEqual([]);
+  await expect.poll(drafts, { timeout: 20_000 }).toEqual([]);
   expect(await get("survivor")).toBe("before");
 });
 
