@@ -250,10 +250,10 @@ function draw(
     const words = action === "seat" || action === null ? seated : ACTION_WORDS[action];
     return drawn(words, null, 1);
   }
-  // A 19 mm socket is no 0.75 in socket: sizes stay as they are marked on the tool.
+  // A 19 mm socket is no 0.75 in socket: sizes stay as they are marked on the tool. A square drive has one name.
   const tool = role === "size" || role === "drive";
   const [firstUnit, secondUnit] = tool
-    ? [quantity.unit, METRIC.has(quantity.unit) ? null : counterpart(quantity)]
+    ? [quantity.unit, role === "drive" || METRIC.has(quantity.unit) ? null : counterpart(quantity)]
     : pairUnits(quantity, prefer);
   const both = (write: (unit: Unit) => string, used: number) =>
     drawn(write(firstUnit), secondUnit ? write(secondUnit) : null, used);

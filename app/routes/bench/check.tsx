@@ -166,7 +166,7 @@ export default function Check({ loaderData, actionData }: Route.ComponentProps) 
           {waiting.length > 0 && others.length > 0 ? (
             <Form method="post">
               <input type="hidden" name="intent" value="send" />
-              <Button>Send for check</Button>
+              <Button look={yours.length > 0 ? "ghost" : "primary"}>Send for check</Button>
             </Form>
           ) : null}
         </div>
