@@ -1,4 +1,5 @@
 import { valuesText } from "~/lessons/values-text";
+import { vehiclesWords } from "~/lessons/vehicle-words";
 import type { FoundValue, SearchResult } from "./search-shop.server";
 
 /** One answer as other programs read it: figures as typed, `si` canonical (N·m, m, Pa, m³, degree, K), `atMs` in lesson time. */
@@ -16,6 +17,9 @@ export type FoundJson = Readonly<{
     si: number | null;
     atMs: number;
     state: string;
+    /** For which cars the lesson is, and what stands against the figure ("" for nothing): no figure goes without them. */
+    vehicle: string;
+    warning: string;
   }>[];
   moments: readonly Readonly<{
     lessonId: string;
@@ -24,14 +28,15 @@ export type FoundJson = Readonly<{
     atMs: number;
     snippet: string;
   }>[];
-  lessons: readonly Readonly<{ lessonId: string; lessonTitle: string }>[];
+  lessons: readonly Readonly<{ lessonId: string; lessonTitle: string; vehicle: string }>[];
 }>;
 
 function answerJson({
   lessonId,
   lessonTitle,
   chapterTitle,
-  found: { mark },
+  lesson,
+  found: { mark, showing, doubts },
   atMs,
 }: FoundValue): FoundJson["answers"][number] {
   const lead = mark.values.find((row) => row.value !== null);
@@ -56,6 +61,9 @@ function answerJson({
     si: lead?.number ?? null,
     atMs,
     state: mark.state,
+    vehicle: vehiclesWords(lesson.vehicles),
+    warning:
+      doubts.length > 0 ? "somebody says this looks wrong" : showing === "unchecked" ? "not yet checked" : "",
   };
 }
 
@@ -70,6 +78,10 @@ export function foundJson(result: Pick<SearchResult, "answers" | "moments" | "le
       atMs,
       snippet: words,
     })),
-    lessons: result.lessons.map(({ lessonId, lessonTitle }) => ({ lessonId, lessonTitle })),
+    lessons: result.lessons.map(({ lessonId, lessonTitle, vehicles }) => ({
+      lessonId,
+      lessonTitle,
+      vehicle: vehiclesWords(vehicles),
+    })),
   };
 }

@@ -11,12 +11,12 @@ function suggestionsOf(found: FoundJson): Suggestion[] {
   const values = found.answers.slice(0, 5).map((answer) => ({
     to: `/lessons/${answer.lessonId}?t=${momentParam(answer.atMs)}`,
     words: [answer.component, answer.text].filter(Boolean).join(": "),
-    under: answer.lessonTitle,
+    under: [answer.warning, answer.vehicle, answer.lessonTitle].filter(Boolean).join(" · "),
   }));
   const lessons = found.lessons.slice(0, 3).map((lesson) => ({
     to: `/lessons/${lesson.lessonId}`,
     words: lesson.lessonTitle,
-    under: "Lesson",
+    under: `Lesson · ${lesson.vehicle}`,
   }));
   return [...values, ...lessons];
 }
