@@ -49,7 +49,7 @@ async function lessonOf(person: Person): Promise<string> {
 }
 
 test("pages before sign-in, first steps and an empty shop", async ({ page, somebody }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(400_000);
   const faults: string[] = [];
   for (const address of ["/sign-in", "/sign-up", "/forgot-password", "/invitation/none"])
     faults.push(...(await faultsOf(page, address)));
@@ -74,7 +74,7 @@ test("a form that was refused", async ({ page }) => {
 test("what a learner sees: library, lesson, search, quiz, result, my training, account", async ({
   signedIn,
 }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(600_000);
   const person = await signedIn(DEMO.owner);
   const { page } = person;
   const lessonId = await lessonOf(person);
@@ -113,7 +113,7 @@ async function benchAddresses(person: Person): Promise<{ bench: string; markId: 
 }
 
 test("the bench: list, lesson, mark, captions, questions", async ({ signedIn }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(600_000);
   const person = await signedIn(DEMO.instructor);
   const { bench, markId } = await benchAddresses(person);
   const faults: string[] = [];
@@ -131,7 +131,7 @@ test("the bench: list, lesson, mark, captions, questions", async ({ signedIn }) 
 });
 
 test("recordings, a new lesson, check, publish, revision, doubts", async ({ signedIn }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(600_000);
   const person = await signedIn(DEMO.instructor);
   const { bench } = await benchAddresses(person);
   const faults: string[] = [];
@@ -149,7 +149,7 @@ test("recordings, a new lesson, check, publish, revision, doubts", async ({ sign
 });
 
 test("who has shown what, assigning, sign-offs, team, settings", async ({ signedIn }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(600_000);
   const { page } = await signedIn(DEMO.owner);
   const faults: string[] = [];
   for (const address of [
