@@ -59,6 +59,21 @@ test("a minimum goes up and a maximum down, so that conversion never widens a li
   expect(formatQuantity(read("9 Nm"), "lbf·in", "down").figure).toBe("79");
 });
 
+// 1 in = 25.4 mm: 0.5 mm is 0.019685 in, 1.2 mm is 0.047244 in, 0.020 in is 0.508 mm.
+test.each([
+  ["limit 0.5 mm", "limit_0.0197_in", "limit_0.5_mm"],
+  ["wear limit 1.2 mm", "limit_0.0472_in", "limit_1.2_mm"],
+  ["limit 0.020 in", "limit_0.020_in", "limit_0.508_mm"],
+] as const)("%s keeps a tenth of its last place in the other unit", (text, first, second) => {
+  const typed = readValues(text);
+  if (!typed.ok) throw new Error(typed.error);
+  const shown = formatValues(typed.values, "inch");
+  expect([shown.first, shown.second].map((each) => seen(each ?? "").replace(" ", "_"))).toEqual([
+    first,
+    second,
+  ]);
+});
+
 test("2,000 random limits stay on their side in every unit of their dimension", () => {
   const random = seeded(99);
   for (let i = 0; i < 2000; i++) {

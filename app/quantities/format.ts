@@ -2,7 +2,7 @@ import { compare, exactOf, minus, over, plus, ratio, times, type Rational } from
 import { convertExact } from "./convert";
 import { isFraction, type Quantity } from "./quantity";
 import { placesIn, writeRounded, type Sense } from "./round";
-import type { Unit } from "./units";
+import { unitRatio, type Unit } from "./units";
 import type { TypedValue } from "./value";
 
 /** Which units a person wants to see first. */
@@ -75,6 +75,22 @@ export function formatQuantity(
       sense,
     );
   return { figure, unit, text: withUnit(figure, unit) };
+}
+
+/**
+ * A limit that does not say on which side it lies cannot be rounded away from danger: in another unit it keeps a tenth
+ * of the last place given, so that 0.5 mm reads 0.0197 in and never 0.020 in, which would pass 0.508 mm.
+ */
+function limitText(quantity: Quantity, unit: Unit): string {
+  const usual = formatQuantity(quantity, unit);
+  if (unit === quantity.unit || isFraction(quantity) || quantity.dimension === "temperature")
+    return usual.text;
+  const step = (Number(`1e-${quantity.places}`) * unitRatio(quantity.unit, unit)) / 10;
+  const places = Math.max(placesIn(quantity, unit), Math.ceil(-Math.log10(step) - 1e-9));
+  return withUnit(
+    figureOf(convertExact(exactOf(quantity.value), quantity.unit, unit), unit, places, "nearest"),
+    unit,
+  );
 }
 
 const METRIC: ReadonlySet<Unit> = new Set<Unit>(
@@ -280,7 +296,9 @@ function draw(
   }
   const sense: Sense = role === "min" ? "up" : role === "max" ? "down" : "nearest";
   const word = action === "back-off" || action === "wait" ? ACTION_WORDS[action] : (ROLE_WORDS[role] ?? "");
-  return both((unit) => `${word} ${formatQuantity(quantity, unit, sense).text}`.trim(), 1);
+  const write = (unit: Unit) =>
+    role === "limit" ? limitText(quantity, unit) : formatQuantity(quantity, unit, sense).text;
+  return both((unit) => `${word} ${write(unit)}`.trim(), 1);
 }
 
 /**

@@ -63,9 +63,9 @@ export function wrongUnitText(
   return `Right number, wrong unit. ${shown}${is === "" ? " is" : is} ${times}.${consequence(dimension, grade.tooMuch, grade.factor)}${right}`;
 }
 
-/** "The value is 88 N·m", "The limit is min 22.0 mm". */
+/** "The value is 88 N·m", "The limit is min 22.0 mm", "The limit is 0.5 mm". */
 function named(whole: string): string {
-  return `The ${/^(?:min|max|limit) /.test(whole) ? "limit" : "value"} is ${whole}`;
+  return `The ${/^(?:min|max|limit) /.test(whole) ? "limit" : "value"} is ${whole.replace(/^limit /, "")}`;
 }
 
 /** What is said of one number that is right, close, or wrong; `whole` is the answer as it should be. */

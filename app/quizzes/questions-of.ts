@@ -62,6 +62,7 @@ export function promptOf(mark: Mark, vehicle: string): string {
     case "measure":
       if (lead?.role === "max") return `What is the most the ${what} may be${on}?`;
       if (lead?.role === "min") return `What is the least the ${what} may be${on}?`;
+      if (lead?.role === "limit") return `What is the limit for the ${what}${on}?`;
       if (rowsAsked(mark).some((row) => row.role === "max"))
         return `Between which limits does the ${what} lie${on}?`;
       return `What is the ${what}${on}?`;
