@@ -27,6 +27,8 @@ export type FoundJson = Readonly<{
     chapterTitle: string;
     atMs: number;
     snippet: string;
+    /** What is right where the snippet is wrong, else "". */
+    correction: string;
   }>[];
   lessons: readonly Readonly<{ lessonId: string; lessonTitle: string; vehicle: string }>[];
 }>;
@@ -71,12 +73,13 @@ function answerJson({
 export function foundJson(result: Pick<SearchResult, "answers" | "moments" | "lessons">): FoundJson {
   return {
     answers: result.answers.filter(({ found }) => found.showing !== "withheld").map(answerJson),
-    moments: result.moments.map(({ lessonId, lessonTitle, chapterTitle, atMs, words }) => ({
+    moments: result.moments.map(({ lessonId, lessonTitle, chapterTitle, atMs, words, correction }) => ({
       lessonId,
       lessonTitle,
       chapterTitle,
       atMs,
       snippet: words,
+      correction,
     })),
     lessons: result.lessons.map(({ lessonId, lessonTitle, vehicles }) => ({
       lessonId,

@@ -1,5 +1,6 @@
 import type { Scope } from "~/auth/scope.server";
 import { componentKey, componentsIn } from "~/lessons/component-key";
+import { correctionAt } from "~/lessons/correction-at";
 import type { LearnerLesson, LearnerMark } from "~/lessons/learner-lesson.server";
 import { lessonTime } from "~/lessons/lesson-time";
 import type { Mark } from "~/lessons/mark";
@@ -32,6 +33,8 @@ export type FoundMoment = Readonly<{
   chapterTitle: string;
   atMs: number;
   words: string;
+  /** What is right where the words are wrong, else "". */
+  correction: string;
 }>;
 export type FoundLesson = Readonly<{
   lessonId: string;
@@ -189,6 +192,10 @@ export function searchShop(scope: Scope, text: string, vehicleId: string, limit:
               chapterTitle: chapterTitle(lesson.snapshot, moment.recordingId, moment.startMs),
               atMs,
               words: moment.words,
+              correction: correctionAt(
+                lesson.marks.map(({ mark }) => mark),
+                { ...moment, endMs: moment.startMs, text: moment.words },
+              ),
             },
           ];
     },

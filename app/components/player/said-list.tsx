@@ -2,7 +2,7 @@ import { useEffect, useRef } from "react";
 import { formatTimecode } from "~/lessons/timecode";
 import { useJump, usePlayer } from "./player-context";
 
-type SaidLine = Readonly<{ atMs: number; endMs: number; text: string }>;
+type SaidLine = Readonly<{ atMs: number; endMs: number; text: string; correction: string }>;
 
 /** Who has scrolled the list reads; it does not move under their eyes for so long. */
 const LEFT_ALONE_MS = 6_000;
@@ -56,7 +56,12 @@ export function SaidList({ lines }: { lines: readonly SaidLine[] }) {
             className="flex min-h-11 w-full gap-3 rounded px-2 py-1.5 text-left hover:bg-enamel-tint aria-[current=true]:bg-brass-tint lg:min-h-8"
           >
             <span className="w-12 shrink-0 text-sm text-ink-soft">{formatTimecode(line.atMs)}</span>
-            <span>{line.text}</span>
+            <span>
+              {line.text}
+              {line.correction === "" ? null : (
+                <span className="block font-semibold">Corrected: {line.correction}</span>
+              )}
+            </span>
           </button>
         </li>
       ))}

@@ -41,7 +41,7 @@ export function loader({ context, params, url }: Route.LoaderArgs) {
     ) ?? NO_SKILL;
   return {
     lesson,
-    said: saidLines(scope, lesson.snapshot),
+    said: saidLines(scope, { ...lesson.snapshot, marks: lesson.marks.map(({ mark }) => mark) }),
     durationMs,
     startMs: Math.min(readMoment(url.searchParams), durationMs),
     continueMs: url.searchParams.has("t") ? null : whereLeft(scope, lessonId, clips),

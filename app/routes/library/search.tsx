@@ -167,6 +167,9 @@ export default function Search({ loaderData }: Route.ComponentProps) {
                       </span>
                       {moment.words}
                     </span>
+                    {moment.correction === "" ? null : (
+                      <span className="font-semibold">Corrected: {moment.correction}</span>
+                    )}
                     <span className="text-sm text-ink-soft">
                       {moment.lessonTitle}
                       {moment.chapterTitle ? `, ${moment.chapterTitle}` : ""}
