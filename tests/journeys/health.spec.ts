@@ -44,8 +44,9 @@ test("the search answers programs as it promises", async ({ signedIn }) => {
     state: "checked",
   });
   expect(value?.["si"]).toBeCloseTo(88.129, 2);
-  expect(Object.keys(value ?? {}).toSorted()).toEqual(
-    [
+  // More may be told of a value; none of this may go.
+  expect(Object.keys(value ?? {})).toEqual(
+    expect.arrayContaining([
       "markId",
       "lessonId",
       "lessonTitle",
@@ -58,7 +59,7 @@ test("the search answers programs as it promises", async ({ signedIn }) => {
       "si",
       "atMs",
       "state",
-    ].toSorted(),
+    ]),
   );
   for (const moment of found.moments)
     expect(Object.keys(moment).toSorted()).toEqual([
