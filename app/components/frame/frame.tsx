@@ -1,4 +1,4 @@
-import { Form, href, Link, NavLink, useLocation } from "react-router";
+import { Form, href, Link, useLocation } from "react-router";
 import { can, type Permission } from "~/auth/permissions";
 import type { Viewer } from "~/auth/viewer";
 import { Brand } from "./brand";
@@ -11,6 +11,14 @@ const PLACES: readonly { to: string; label: string; permission: Permission }[] =
   { to: "/skills", label: "Who has shown what", permission: "training:see-all" },
   { to: "/team", label: "Team", permission: "team:see" },
 ];
+
+/** Pages of who teaches whose addresses begin like those of who learns. */
+const TEACHING = /^\/training\/(?:assign|sign-offs|people)(?:\/|$)/;
+
+function isHere(place: string, pathname: string): boolean {
+  const at = TEACHING.test(pathname) ? "/skills" : pathname;
+  return at === place || (place !== "/" && at.startsWith(`${place}/`));
+}
 
 function UnitSwitch({ viewer }: { viewer: Viewer }) {
   const { pathname, search } = useLocation();
@@ -46,6 +54,7 @@ function initials(name: string): string {
 
 /** The frame of every signed-in page: brand, search, places by role, units, account. */
 export function Frame({ viewer, children }: { viewer: Viewer; children: React.ReactNode }) {
+  const { pathname } = useLocation();
   const places = PLACES.filter((place) => can(viewer.role, place.permission));
   return (
     <>
@@ -82,16 +91,14 @@ export function Frame({ viewer, children }: { viewer: Viewer; children: React.Re
             className="order-3 -mx-2 flex w-full flex-wrap gap-x-1 xl:order-3 xl:mx-0 xl:ml-auto xl:w-auto"
           >
             {places.map((place) => (
-              <NavLink
+              <Link
                 key={place.to}
                 to={place.to}
-                end={place.to === "/"}
-                className={({ isActive }) =>
-                  `flex min-h-11 items-center rounded px-3 font-semibold whitespace-nowrap no-underline ${isActive ? "bg-enamel text-on-enamel" : "text-on-graphite hover:bg-enamel/60"}`
-                }
+                aria-current={isHere(place.to, pathname) ? "page" : undefined}
+                className="flex min-h-11 items-center rounded px-3 font-semibold whitespace-nowrap text-on-graphite no-underline hover:bg-enamel/60 aria-[current=page]:bg-enamel aria-[current=page]:text-on-enamel"
               >
                 {place.label}
-              </NavLink>
+              </Link>
             ))}
           </nav>
         </div>

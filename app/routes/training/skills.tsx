@@ -5,6 +5,7 @@ import { Button, ButtonLink } from "~/components/ui/button";
 import { Select } from "~/components/ui/field";
 import { EmptyState, Page, Remark, Sheet } from "~/components/ui/page";
 import { scopeContext } from "~/context";
+import { SYSTEM_WORDS } from "~/lessons/mark-words";
 import { skillsTable } from "~/training/skills-table.server";
 import type { Route } from "./+types/skills";
 
@@ -66,9 +67,7 @@ function Grid({ columns, rows }: Pick<Data, "columns" | "rows">) {
                 scope="col"
                 className="min-w-28 border-r border-b border-line px-3 py-3 text-left align-bottom text-sm font-semibold"
               >
-                <span className="block text-xs font-normal text-ink-soft">
-                  {lesson.system.replace("-", " ")}
-                </span>
+                <span className="block text-xs font-normal text-ink-soft">{SYSTEM_WORDS[lesson.system]}</span>
                 {lesson.title}
               </th>
             ))}
@@ -190,7 +189,7 @@ export default function Skills({ loaderData }: Route.ComponentProps) {
               label="System"
               name="system"
               defaultValue={filter.system}
-              options={[all, ...systems.map((value) => ({ value, label: value.replace("-", " ") }))]}
+              options={[all, ...systems.map((value) => ({ value, label: SYSTEM_WORDS[value] }))]}
               className="min-w-36"
             />
             <Select
