@@ -1,20 +1,21 @@
 import { data, Form, href, Link, redirect } from "react-router";
 import { z } from "zod";
 import { requirePermission } from "~/auth/require.server";
-import { CastleNut, nutWords, type NutState } from "~/components/plates/castle-nut";
+import { CastleNut } from "~/components/plates/castle-nut";
 import { Button, ButtonLink } from "~/components/ui/button";
 import { EmptyState, Page, Sheet } from "~/components/ui/page";
 import { scopeContext } from "~/context";
 import { parseForm } from "~/forms/parse-form";
 import { dueWords, formatLocalDate } from "~/training/local-date";
 import { myTraining } from "~/training/my-training.server";
+import { progressWords } from "~/training/progress-words";
 import { withdrawRequest } from "~/training/sign-off.server";
 import { LEVEL_WORDS } from "~/training/sign-off";
+import { NO_SKILL, type SkillState } from "~/training/skill-state";
 import type { SignOffRequestId } from "#drizzle/schema/ids";
 import type { Route } from "./+types/my-training";
 
 const Withdraw = z.object({ request: z.string().transform((id) => id as SignOffRequestId) });
-const NOT_STARTED: NutState = { seen: false, answered: false, shown: false };
 
 export function meta() {
   return [{ title: "My training · Castlenut" }];
@@ -50,7 +51,7 @@ function ClockNotch() {
 }
 
 /** The next thing to do: watch, then the quiz, then a sign-off. */
-function NextStep({ lessonId, state }: { lessonId: string; state: NutState }) {
+function NextStep({ lessonId, state }: { lessonId: string; state: SkillState }) {
   if (!state.seen) return <ButtonLink to={`/lessons/${lessonId}`}>Watch</ButtonLink>;
   if (!state.answered || state.changedSince)
     return <ButtonLink to={`/lessons/${lessonId}/quiz`}>Take the quiz</ButtonLink>;
@@ -71,10 +72,10 @@ function Row({
 }: {
   lessonId: string;
   title: string;
-  skill: NutState | undefined;
+  skill: SkillState | undefined;
   children?: React.ReactNode;
 }) {
-  const state = skill ?? NOT_STARTED;
+  const state = skill ?? NO_SKILL;
   return (
     <li className="flex flex-wrap items-center gap-x-4 gap-y-2 border-b border-line px-5 py-4 last:border-b-0">
       <CastleNut state={state} />
@@ -83,7 +84,7 @@ function Row({
           {title}
         </Link>
         <div className="text-sm text-ink-soft">
-          {nutWords(state)}
+          {progressWords(state)}
           {children}
         </div>
       </div>

@@ -63,6 +63,11 @@ export default function Skill({ loaderData, actionData }: Route.ComponentProps) 
     shown: skill?.shown ?? false,
     changedSince: skill?.changedSince ?? false,
   };
+  const begun =
+    !state.seen &&
+    !state.answered &&
+    !state.shown &&
+    ((skill?.shownCount ?? 0) > 0 || (skill?.coverage ?? 0) > 0 || attempts.length > 0);
   const ids = { userId: person.id, lessonId: lesson.id };
   return (
     <Page
@@ -85,7 +90,7 @@ export default function Skill({ loaderData, actionData }: Route.ComponentProps) 
       <Sheet className="flex items-center gap-4 p-5">
         <CastleNut state={state} size={56} />
         <div>
-          <p className="text-lg font-semibold">{nutWords(state)}</p>
+          <p className="text-lg font-semibold">{begun ? "begun" : nutWords(state)}</p>
           <p className="text-sm text-ink-soft">
             Watched {Math.round((skill?.coverage ?? 0) * 100)} % of the lesson. Shown on{" "}
             {skill?.shownCount ?? 0} of {shownJobs} {shownJobs === 1 ? "day" : "different days"} that fill the
