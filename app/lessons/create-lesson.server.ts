@@ -74,7 +74,7 @@ export function createLesson(
     }
     const vehicles = setLessonVehicles(scope, lessonId, lesson.vehicles, lesson.newVehicle, now);
     if (!vehicles.ok) return vehicles;
-    writeAudit(scope, { action: "create", noun: "lesson", nounId: lessonId, detail: lesson.title }, now);
+    writeAudit(scope, { action: "began", noun: "lesson", nounId: lessonId, detail: lesson.title }, now);
     return { ok: true, lessonId };
   });
 }

@@ -128,7 +128,7 @@ export function assignLesson(
           action: open ? "moved the due date" : "assigned",
           noun: "lesson",
           nounId: lesson.id,
-          detail: `${lesson.title} to ${person.name}, due ${order.dueOn}`,
+          detail: `${lesson.title} to ${person.name}, due ${formatLocalDate(order.dueOn)}`,
         },
         now,
       );

@@ -16,7 +16,7 @@ const PLACES: readonly { to: string; label: string; permission: Permission }[] =
 const TEACHING = /^\/training\/(?:assign|sign-offs|people)(?:\/|$)/;
 
 function isHere(place: string, pathname: string): boolean {
-  const at = TEACHING.test(pathname) ? "/skills" : pathname;
+  const at = TEACHING.test(pathname) ? "/skills" : pathname.startsWith("/settings") ? "/team" : pathname;
   return at === place || (place !== "/" && at.startsWith(`${place}/`));
 }
 

@@ -88,7 +88,7 @@ function RecordingRow({
       )}
       <div className="grid min-w-0 flex-1 basis-64 content-start gap-1">
         <p className="font-semibold">{row.title}</p>
-        <p className="text-sm break-all text-ink-soft">
+        <p className="text-sm wrap-anywhere text-ink-soft">
           {row.fileName}, {sizeWords(row.sizeBytes)}
           {row.durationMs ? `, ${lengthWords(row.durationMs)}` : ""}
           {row.width && row.height ? `, ${row.width} × ${row.height}` : ""}
