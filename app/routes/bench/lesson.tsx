@@ -147,6 +147,11 @@ export default function BenchLesson({ loaderData, actionData }: Route.ComponentP
             <ButtonLink look="ghost" to={address("check")}>
               Check values
             </ButtonLink>
+            {lesson.newestRevision === null ? null : (
+              <ButtonLink look="ghost" to={address("questions")}>
+                Questions
+              </ButtonLink>
+            )}
             <ButtonLink to={address("publish")}>Publish</ButtonLink>
           </>
         }
