@@ -5,23 +5,27 @@ export type Answer =
   | Readonly<{ form: "one"; first: FoundValue }>
   | Readonly<{ form: "variants"; first: FoundValue; question: string; all: readonly FoundValue[] }>;
 
-const sameThing = (a: FoundValue, b: FoundValue) =>
+const sameGroup = (a: FoundValue, b: FoundValue) =>
+  b.question !== "" &&
+  a.question === b.question &&
   a.lessonId === b.lessonId &&
   a.found.mark.kind === b.found.mark.kind &&
   a.found.mark.componentKey === b.found.mark.componentKey &&
-  a.found.mark.side === b.found.mark.side &&
-  a.found.mark.applies.question !== "" &&
-  a.found.mark.applies.question === b.found.mark.applies.question;
+  a.found.mark.side === b.found.mark.side;
 
-/** Groups variants of one component: they are shown together or not at all, in the place of the best of them. */
+/** Puts the variants of one component, which stand side by side in a search result, into one answer. */
 export function answersWithVariants(values: readonly FoundValue[]): Answer[] {
-  const taken = new Set<FoundValue>();
-  return values.flatMap((first): Answer[] => {
-    if (taken.has(first)) return [];
-    const all = values.filter((other) => other === first || sameThing(first, other));
-    for (const value of all) taken.add(value);
-    return all.length > 1
-      ? [{ form: "variants", first, question: first.found.mark.applies.question, all }]
-      : [{ form: "one", first }];
+  const groups: FoundValue[][] = [];
+  for (const value of values) {
+    const group = groups.at(-1);
+    if (group?.[0] && sameGroup(value, group[0])) group.push(value);
+    else groups.push([value]);
+  }
+  return groups.flatMap((all): Answer[] => {
+    const [first] = all;
+    if (!first) return [];
+    return first.question === ""
+      ? [{ form: "one", first }]
+      : [{ form: "variants", first, question: first.question, all }];
   });
 }

@@ -1,5 +1,6 @@
+import type { AppliesTo } from "~/lessons/mark";
 import { valuesText } from "~/lessons/values-text";
-import { vehiclesWords } from "~/lessons/vehicle-words";
+import { vehiclesWords, yearsWords } from "~/lessons/vehicle-words";
 import type { FoundValue, SearchResult } from "./search-shop.server";
 
 /** One answer as other programs read it: figures as typed, `si` canonical (N·m, m, Pa, m³, degree, K), `atMs` in lesson time. */
@@ -33,11 +34,16 @@ export type FoundJson = Readonly<{
   lessons: readonly Readonly<{ lessonId: string; lessonTitle: string; vehicle: string }>[];
 }>;
 
+/** Which of several variants a value is for: a program must not take one for all. */
+function variantWords({ yearFrom, yearTo, engine, drive, variant }: AppliesTo): string {
+  return [yearsWords(yearFrom, yearTo), engine, drive, variant].filter(Boolean).join(", ");
+}
+
 function answerJson({
   lessonId,
   lessonTitle,
   chapterTitle,
-  lesson,
+  vehicles,
   found: { mark, showing, doubts },
   atMs,
 }: FoundValue): FoundJson["answers"][number] {
@@ -56,14 +62,14 @@ function answerJson({
     lessonTitle,
     chapterTitle,
     kind: mark.kind,
-    component: mark.component || mark.toolName,
+    component: [mark.component || mark.toolName, variantWords(mark.applies)].filter(Boolean).join(", "),
     text,
     value: lead?.value ?? null,
     unit: lead?.unit ?? null,
     si: lead?.number ?? null,
     atMs,
     state: mark.state,
-    vehicle: vehiclesWords(lesson.vehicles),
+    vehicle: vehiclesWords(vehicles),
     warning:
       doubts.length > 0 ? "somebody says this looks wrong" : showing === "unchecked" ? "not yet checked" : "",
   };

@@ -1,9 +1,10 @@
-import { componentsIn, otherNames } from "~/lessons/component-key";
+import { otherNames } from "~/lessons/component-key";
 import type { LearnerLesson, LearnerMark } from "~/lessons/learner-lesson.server";
 import { lessonTime } from "~/lessons/lesson-time";
 import type { Mark, MarkKind } from "~/lessons/mark";
 import { mayAnswer } from "~/lessons/showing";
 import { valuesText } from "~/lessons/values-text";
+import { searchWords } from "./search-words";
 
 /** One thing that can be found: a mark, a chapter or a lesson. The text fields are searched, the rest is carried. */
 export type SearchDocument = Readonly<{
@@ -22,6 +23,8 @@ export type SearchDocument = Readonly<{
   chapter: string;
   lesson: string;
   vehicle: string;
+  /** The parts that its lesson and chapter are about, each name as search words. */
+  around: readonly (readonly string[])[];
 }>;
 
 const KIND_WORDS: Readonly<Record<MarkKind, string>> = {
@@ -45,10 +48,14 @@ const DIMENSION_WORDS: Readonly<Record<string, string>> = {
   angle: "angle turn",
 };
 
+/** "HL-7031-40" is also typed as "HL703140". */
+const runTogether = (partNumber: string) => partNumber.replace(/[^\p{L}\p{N}]+/gu, "");
+
 function detailOf(mark: Mark): string {
   return [
     mark.toolName,
     mark.partNumber,
+    runTogether(mark.partNumber),
     mark.product,
     mark.words,
     mark.reason,
@@ -73,7 +80,13 @@ export function isFindable({ mark, showing }: LearnerMark): boolean {
 export function documentsOf(lesson: LearnerLesson): SearchDocument[] {
   const { snapshot } = lesson;
   const vehicle = snapshot.vehicles.map((found) => `${found.make} ${found.model} ${found.engine}`).join(" ");
-  const common = { lessonId: snapshot.lessonId as string, lesson: snapshot.title, vehicle };
+  const around = (...titles: string[]) => otherNames(titles.join(" / ")).map(searchWords);
+  const common = {
+    lessonId: snapshot.lessonId as string,
+    lesson: snapshot.title,
+    vehicle,
+    around: around(snapshot.title),
+  };
   const chapters = new Map(snapshot.chapters.map((chapter) => [chapter.id as string, chapter.title]));
   const plays = ({ mark }: LearnerMark) => lessonTime(snapshot.clips, mark.recordingId, mark.atMs) !== null;
   return [
@@ -114,12 +127,7 @@ export function documentsOf(lesson: LearnerLesson): SearchDocument[] {
         kindWords: KIND_WORDS[mark.kind],
         detail: detailOf(mark),
         chapter: chapters.get(mark.chapterId) ?? "",
+        around: around(snapshot.title, chapters.get(mark.chapterId) ?? ""),
       })),
   ];
-}
-
-/** How many components of the vocabulary a query and a document have in common, for ranking. */
-export function sharedComponents(query: string, component: string): number {
-  const wanted = new Set(componentsIn(query).map(({ key }) => key));
-  return componentsIn(component).filter(({ key }) => wanted.has(key)).length;
 }

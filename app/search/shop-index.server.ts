@@ -3,30 +3,35 @@ import type { Database } from "~/db.server";
 import { allLearnerLessons, type LearnerLesson } from "~/lessons/learner-lesson.server";
 import type { LessonId, ShopId } from "#drizzle/schema/ids";
 import { lessons } from "#drizzle/schema/index";
-import { documentsOf } from "./search-document";
-import { buildSearchIndex, replaceDocuments, type SearchIndex } from "./search-index";
+import { RecentlyUsed } from "./recently-used";
+import { documentsOf, type SearchDocument } from "./search-document";
+import { emptyIndex, replaceDocuments, type SearchIndex } from "./search-index";
 
 type InShop = Readonly<{ db: Database; shopId: ShopId }>;
 
-type ShopIndex = {
-  index: SearchIndex;
-  lessons: Map<string, { signature: string; lesson: LearnerLesson; documents: readonly string[] }>;
-};
+type Held = Readonly<{ signature: string; lesson: LearnerLesson; documents: readonly SearchDocument[] }>;
+type ShopIndex = Readonly<{ index: SearchIndex; lessons: Map<string, Held> }>;
 
-const MOST_SHOPS = 50;
+/** How many shops' indexes a process keeps. */
+export const MOST_SHOPS = 50;
 
 // Kept by database as well, so that two databases in one process never share a shop's index.
-const held = new WeakMap<object, Map<ShopId, ShopIndex>>();
+const kept = new WeakMap<object, RecentlyUsed<ShopId, ShopIndex>>();
 
-function shelf(db: Database): Map<ShopId, ShopIndex> {
+function shelf(db: Database): RecentlyUsed<ShopId, ShopIndex> {
   // A transaction is another object over the same database; its session is what they share.
   const key = (db as unknown as { session: object }).session;
-  let found = held.get(key);
+  let found = kept.get(key);
   if (!found) {
-    found = new Map();
-    held.set(key, found);
+    found = new RecentlyUsed(MOST_SHOPS);
+    kept.set(key, found);
   }
   return found;
+}
+
+/** Whether a shop's index is in memory. */
+export function isKept({ db, shopId }: InShop): boolean {
+  return shelf(db).has(shopId);
 }
 
 /** What each published lesson stands at: its revision, the checks and doubts laid over it. Cheap, read at every search. */
@@ -55,19 +60,8 @@ export function shopIndex(scope: InShop): {
   index: SearchIndex;
   lessons: ReadonlyMap<string, LearnerLesson>;
 } {
-  const shops = shelf(scope.db);
   const wanted = signatures(scope);
-  let shop = shops.get(scope.shopId);
-  if (!shop) {
-    shop = { index: buildSearchIndex([]), lessons: new Map() };
-    if (shops.size >= MOST_SHOPS) {
-      const [oldest] = shops.keys();
-      if (oldest !== undefined) shops.delete(oldest);
-    }
-  }
-  // Last in the map is searched last.
-  shops.delete(scope.shopId);
-  shops.set(scope.shopId, shop);
+  const shop = shelf(scope.db).use(scope.shopId, () => ({ index: emptyIndex(), lessons: new Map() }));
 
   for (const [id, known] of shop.lessons)
     if (!wanted.has(id as LessonId)) {
@@ -83,11 +77,7 @@ export function shopIndex(scope: InShop): {
     const id = lesson.snapshot.lessonId;
     const documents = documentsOf(lesson);
     replaceDocuments(shop.index, shop.lessons.get(id)?.documents ?? [], documents);
-    shop.lessons.set(id, {
-      signature: wanted.get(id) ?? "",
-      lesson,
-      documents: documents.map((document) => document.id),
-    });
+    shop.lessons.set(id, { signature: wanted.get(id) ?? "", lesson, documents });
   }
   return { index: shop.index, lessons: new Map([...shop.lessons].map(([id, { lesson }]) => [id, lesson])) };
 }

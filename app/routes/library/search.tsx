@@ -56,7 +56,7 @@ function PlayFrom({ lessonId, atMs }: { lessonId: string; atMs: number }) {
 function Whom({ value }: { value: FoundValue }) {
   return (
     <p className="text-sm text-ink-soft">
-      {vehiclesWords(value.lesson.vehicles)} ·{" "}
+      {vehiclesWords(value.vehicles)} ·{" "}
       <Link to={href("/lessons/:lessonId", { lessonId: value.lessonId })}>{value.lessonTitle}</Link>
       {value.chapterTitle ? `, ${value.chapterTitle}` : ""}
     </p>
@@ -69,7 +69,7 @@ function NotYours({ value, view }: { value: FoundValue; view: PlateView }) {
     <details className="rounded-md border border-line bg-sheet">
       <summary className="flex min-h-14 cursor-pointer flex-wrap items-center gap-x-3 px-4 py-2">
         <span className="font-semibold">{value.found.mark.component || value.lessonTitle}</span>
-        <span className="text-sm text-ink-soft">{vehiclesWords(value.lesson.vehicles)}</span>
+        <span className="text-sm text-ink-soft">{vehiclesWords(value.vehicles)}</span>
       </summary>
       <div className="grid gap-3 p-4">
         <p className="border-2 border-ink bg-ink px-4 py-2 font-figure text-xl font-semibold text-paper">
