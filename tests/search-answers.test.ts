@@ -116,3 +116,11 @@ test("a moment that is said is found by its words, with its second", () => {
   expect(moment?.snippet).toContain("paint mark");
   expect(moment?.atMs).toBeGreaterThan(400_000);
 });
+
+test("a moment is found by another name of what is said", () => {
+  const [moment] = ask("anti-roll bar bush").moments;
+  expect(moment?.snippet).toContain("sway bar bushings");
+  expect(ask("sump plug").moments.map(({ snippet }) => snippet.toLowerCase())).toContainEqual(
+    expect.stringContaining("drain plug"),
+  );
+});

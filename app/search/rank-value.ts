@@ -30,12 +30,14 @@ const WEIGHTS = {
   dimensionAsked: 3,
   otherDimension: 0.3,
   withPartNumber: 3,
-  figureUnasked: 1.5,
+  torqueUnasked: 3,
+  measureUnasked: 1.5,
   samePart: 2.5,
   noPartNamed: 0.6,
   toolOfSize: 2,
   otherFigure: 0.05,
   placeAsked: 4,
+  unnamed: 0.4,
   narrower: 0.5,
   seenOnce: 0.5,
   waiting: 0.8,
@@ -102,13 +104,18 @@ export function rankValue(query: Query, found: LearnerMark, score: number): numb
       rank *= mark.values.some((row) => row.dimension === dimension)
         ? WEIGHTS.dimensionAsked
         : WEIGHTS.otherDimension;
-  } else if (mark.kind === "torque" || mark.kind === "measure") rank *= WEIGHTS.figureUnasked;
+  } else if (mark.kind === "torque") rank *= WEIGHTS.torqueUnasked;
+  else if (mark.kind === "measure") rank *= WEIGHTS.measureUnasked;
   if (quantity) {
     if (!holdsQuantity(mark, quantity)) rank *= WEIGHTS.otherFigure;
     else if (quantity.dimension === "length" && mark.kind === "tool") rank *= WEIGHTS.toolOfSize;
   }
   const asked = new Set(searchWords(query.text));
-  const own = searchWords(`${mark.component} ${mark.position} ${mark.side}`);
+  const name = searchWords(mark.component);
+  // "What oil": the engine oil is nearer than the oil filter's gasket.
+  const named = name.length === 0 ? 1 : name.filter((word) => asked.has(word)).length / name.length;
+  rank *= WEIGHTS.unnamed + (1 - WEIGHTS.unnamed) * named;
+  const own = [...name, ...searchWords(`${mark.position} ${mark.side}`)];
   if (own.some((word) => PLACES.has(word) && asked.has(word))) rank *= WEIGHTS.placeAsked;
   if (own.some((word) => NARROWER.has(word) && !asked.has(word))) rank *= WEIGHTS.narrower;
   // What was seen on one car answers less than what is specified.

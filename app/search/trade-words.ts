@@ -33,6 +33,7 @@ export const SPELLINGS: Readonly<Record<string, string>> = {
   bushing: "bush",
   clamp: "clip",
   motor: "engine",
+  cooling: "coolant",
   top: "upper",
   bottom: "lower",
   fixing: "mounting",
@@ -58,13 +59,17 @@ export const INTENT_WORDS: Readonly<Record<Intent, readonly string[]>> = {
     "gap clearance thickness diameter wear limit minimum maximum min max play depth length runout resistance voltage temperature interval lift rating thread",
   ),
   size: list("size socket wrench tool hex key bit driver ratchet torx crowfoot allen"),
-  supply: list("grease lubricant locker sealant cleaner lube"),
+  supply: list("grease lubricant locker sealant cleaner lube grade viscosity weight type"),
 };
 
 /** Phrases that settle an intent before single words do. */
 export const INTENT_PHRASES: readonly (readonly [RegExp, Intent])[] = [
   [/\btorque (?:wrench|spanner)(?! setting)\b/i, "size"],
   [/\bhow tight\b/i, "torque"],
+  [
+    /\b(?:what|which)(?: (?:type|kind|sort|grade) of)? (?:oil|coolant|antifreeze|fluid|grease|sealant|lubricant)\b(?! (?:pressure|filter|capacity|level|temperature))/i,
+    "supply",
+  ],
   [/\bthread ?lock(?:er)?\b|\bthread ?blocker\b/i, "supply"],
 ];
 
@@ -83,7 +88,9 @@ export const SOFT_WORDS: ReadonlySet<string> = new Set([
   ...INTENT_WORDS.size,
   ...INTENT_WORDS.part,
   ...INTENT_WORDS.caution,
-  ...list("psi kpa inflate capacity volume quart liter pint gallon minimum maximum min max limit"),
+  ...list(
+    "psi kpa inflate capacity volume quart liter pint gallon minimum maximum min max limit wear grade viscosity weight type",
+  ),
   ...list("mounting assembly hardware fastener kit new"),
   // A place that the value does not name is no contradiction; the opposite is (see OPPOSITES).
   ...list("front rear left right"),
